@@ -36,11 +36,6 @@ export interface Covariance {
   reference(contrast: Float64Array): ReferenceLaw;
   /** The law of the Wald statistic of R (q×k) restrictions. Throws when q exceeds what the estimator can bear. */
   joint(restrictions: Matrix): JointLaw;
-  /**
-   * Variance of c'β̂ where the estimator chooses its bandwidth for the contrast at hand; without it the quadratic
-   * form of `matrix` is meant.
-   */
-  readonly contrastVariance?: (contrast: Float64Array) => number;
 }
 
 /** A covariance estimator: put on a fit afterwards, it never re-estimates the coefficients. */

@@ -33,4 +33,6 @@ export interface Regression {
   readonly periods: Float64Array;
   /** Whether a lag of the outcome is among the terms, in which case some tests do not apply. */
   readonly laggedOutcome: boolean;
+  /** What row `row` (from 0) is called on a card: `2022-W14`. Absent when the rows come from no table. */
+  readonly periodName?: (row: number) => string;
 }

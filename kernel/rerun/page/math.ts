@@ -33,13 +33,15 @@ export function mathPlugin(markdown: MarkdownIt): void {
   };
 }
 
-/** Where the formula ends. A single `$` must hug its formula and not run into a figure: "$5 and $6" is money. */
+/**
+ * Where the formula ends. A single `$` must hug its formula and not run into a figure ("$5 and $6" is money), and
+ * holds no code.
+ */
 function closing(text: string, from: number, fence: string): number | undefined {
-  if (fence === "$" && /\s|^$/.test(text[from] ?? "")) return undefined;
-  for (let at = text.indexOf(fence, from); at !== -1; at = text.indexOf(fence, at + 1)) {
-    if (at === from || text[at - 1] === "\\") continue;
-    if (fence === "$" && (/\s/.test(text[at - 1]!) || /\d/.test(text[at + 1] ?? ""))) continue;
-    return at;
-  }
-  return undefined;
+  let at = text.indexOf(fence, from);
+  while (at !== -1 && text[at - 1] === "\\") at = text.indexOf(fence, at + 1);
+  if (at === -1 || at === from) return undefined;
+  if (fence === "$$") return at;
+  const formula = text.slice(from, at);
+  return /^\s|\s$|`/.test(formula) || /\d/.test(text[at + 1] ?? "") ? undefined : at;
 }

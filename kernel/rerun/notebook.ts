@@ -107,8 +107,12 @@ export function writeNotebook(notebook: Notebook): string {
   return `${JSON.stringify(sorted({ ...notebook, cells }), null, 1)}\n`;
 }
 
+// Lines end where Python's str.splitlines sees an end, since that is what splits them in Jupyter.
+const ends = "\\n\\r\\v\\f\\x1c-\\x1e\\x85\\u2028\\u2029";
+const line = new RegExp(`[^${ends}]*(?:\\r\\n|[${ends}])|[^${ends}]+$`, "g");
+
 function asLines(text: Multiline): string[] {
-  return joined(text).match(/[^\n]*\n|[^\n]+$/g) ?? [];
+  return joined(text).match(line) ?? [];
 }
 
 function fileOutput(output: CellOutput): unknown {

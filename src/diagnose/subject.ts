@@ -9,6 +9,8 @@ export interface Fitted {
   /** Confidence level of intervals and bands. */
   readonly level: number;
   readonly design: { readonly index: TimeIndex };
+  /** Under the covariance estimator that is on; classical standard errors stand in where there is none. */
+  readonly coefficients?: readonly { readonly term: string; readonly se: number }[];
   readonly specification?: unknown;
   readonly fingerprint?: string;
 }

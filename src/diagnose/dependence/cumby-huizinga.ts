@@ -6,6 +6,7 @@ import {
   fromColumns,
   type Matrix,
   matrix,
+  NotPositiveDefinite,
   solveCholesky,
 } from "../../numeric/index.js";
 import { chiSquaredTest, notComputed } from "../parts/laws.js";
@@ -78,7 +79,8 @@ function wald(sums: readonly number[], S: Matrix): number | undefined {
   try {
     const solution = columnOf(solveCholesky(cholesky(unit), c), 0);
     return solution.reduce((sum, x, i) => sum + x * c.data[i]!, 0);
-  } catch {
-    return undefined;
+  } catch (problem) {
+    if (problem instanceof NotPositiveDefinite) return undefined;
+    throw problem;
   }
 }

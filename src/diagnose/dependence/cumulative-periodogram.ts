@@ -1,5 +1,5 @@
-import { fft } from "../../numeric/index.js";
 import { kolmogorovUpper, kolmogorovUpperQuantile } from "../laws/kolmogorov.js";
+import { periodogram } from "../parts/fourier.js";
 import { notComputed } from "../parts/laws.js";
 import { hasGaps } from "../parts/time.js";
 import type { Test } from "../test.js";
@@ -30,12 +30,10 @@ export function cumulativePeriodogram(
   const without = (note: string) => ({ test: notComputed(name, note), path: [], band: Number.NaN });
   if (T < 12) return without(`needs at least 12 periods, there are ${T}`);
   if (hasGaps(periods)) return without("needs every period from first to last, and some are missing");
-  const re = Float64Array.from(values);
-  const im = new Float64Array(T);
-  fft(re, im);
+  const ordinates = periodogram(values);
   const n = Math.floor((T - 1) / 2);
   const share = new Float64Array(n + 1);
-  for (let j = 1; j <= n; j++) share[j] = share[j - 1]! + re[j]! ** 2 + im[j]! ** 2;
+  for (let j = 1; j <= n; j++) share[j] = share[j - 1]! + ordinates[j]!;
   const total = share[n]!;
   if (!(total > 0)) return without("the residuals do not vary at any frequency");
   const m = n - 1;

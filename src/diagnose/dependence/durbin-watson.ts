@@ -1,10 +1,10 @@
 import type { Regression } from "../../estimate/index.js";
+import { durbinWatsonTails } from "../../numeric/index.js";
 import { notComputed } from "../parts/laws.js";
 import { unitResiduals } from "../parts/residuals.js";
 import { laggedProducts, rowsEarlier } from "../parts/time.js";
 import { figure, pValue } from "../parts/words.js";
 import type { Test } from "../test.js";
-import { durbinWatsonTails } from "./durbin-watson-law.js";
 
 /** The Durbin–Watson test with both one-sided p-values; `p` is the two-sided one, twice the smaller. */
 export interface DurbinWatson extends Test {
@@ -40,8 +40,9 @@ export function durbinWatson(m: Regression): DurbinWatson {
       pPositive: Number.NaN,
       pNegative: Number.NaN,
     };
+  const linked = Uint8Array.from(before, (row) => (row >= 0 ? 1 : 0));
   const d = differences / laggedProducts(e, e, m.periods, 0).sum;
-  const { lower, upper } = durbinWatsonTails(d, m.Q, m.periods);
+  const { lower, upper } = durbinWatsonTails(d, m.Q, linked);
   const sides = `against positive ${pValue(lower)}, against negative ${pValue(upper)}`;
   const gaps = pairs < m.T - 1 ? `; ${pairs} pairs of neighbours in ${m.T} periods` : "";
   return {

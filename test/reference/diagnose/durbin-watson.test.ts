@@ -3,7 +3,7 @@
 import assert from "node:assert/strict";
 import { test } from "node:test";
 import { durbinWatson } from "../../../src/diagnose/dependence/durbin-watson.js";
-import { durbinWatsonTails } from "../../../src/diagnose/dependence/durbin-watson-law.js";
+import { durbinWatsonTails } from "../../../src/numeric/index.js";
 import { fixture } from "../../root.js";
 import { agree, regression } from "../../unit/diagnose/subject.js";
 
@@ -16,7 +16,7 @@ test("exact law against 60-digit Imhof: 12 digits, from p = 0.5 down to p = 1e-2
   for (const [name, c] of Object.entries(cases)) {
     const m = regression(c.y, c.X);
     const want = c.tests.durbin_watson;
-    const { lower, upper } = durbinWatsonTails(want.d!, m.Q, m.periods);
+    const { lower, upper } = durbinWatsonTails(want.d!, m.Q);
     agree(lower, want.p_lower_positive_autocorrelation!, 12, `${name} lower`);
     agree(upper, want.p_upper_negative_autocorrelation!, 12, `${name} upper`);
   }
@@ -42,7 +42,8 @@ test("across gaps: 11 digits against eigenvalues and Imhof's integral", () => {
   };
   for (const [name, d, want] of rows) {
     const m = subjects[name]!;
-    const { lower } = durbinWatsonTails(d, m.Q, m.periods);
+    const linked = Uint8Array.from(m.periods, (at, t) => +(t > 0 && at - m.periods[t - 1]! === 1));
+    const { lower } = durbinWatsonTails(d, m.Q, linked);
     assert.ok(Math.abs(lower - want) < 1e-11, `${name} at ${d}: ${lower} against ${want}`);
   }
 });
@@ -60,8 +61,8 @@ test("table points: at dL and dU the most and least favourable terms give the ta
     const upperBound = regression(y, [ones(n), ...low]);
     const lowerBound = regression(y, [ones(n), ...high]);
     [0.01, 0.025, 0.05].forEach((level, i) => {
-      const atL = durbinWatsonTails(points[2 * i]!, lowerBound.Q, lowerBound.periods).lower;
-      const atU = durbinWatsonTails(points[2 * i + 1]!, upperBound.Q, upperBound.periods).lower;
+      const atL = durbinWatsonTails(points[2 * i]!, lowerBound.Q).lower;
+      const atU = durbinWatsonTails(points[2 * i + 1]!, upperBound.Q).lower;
       // half a unit of the fourth decimal moves the level by less than 1 %
       assert.ok(Math.abs(atL / level - 1) < 0.01, `dL(${n}, ${extra}) at ${level}: ${atL}`);
       assert.ok(Math.abs(atU / level - 1) < 0.01, `dU(${n}, ${extra}) at ${level}: ${atU}`);
@@ -81,6 +82,6 @@ test("three periods about their mean: d = 2 − cos 2θ, θ uniform, in closed f
   const m = regression([1, 3, 2], [ones(3)]);
   for (const d of [1.1, 1.7, 2, 2.6]) {
     const want = 1 - (2 / Math.PI) * Math.asin(Math.sqrt((3 - d) / 2));
-    agree(durbinWatsonTails(d, m.Q, m.periods).lower, want, 9, `d = ${d}`);
+    agree(durbinWatsonTails(d, m.Q).lower, want, 9, `d = ${d}`);
   }
 });

@@ -49,6 +49,8 @@ export function prepareHome(home: string, outer: NodeJS.ProcessEnv = process.env
     JUPYTERLAB_WORKSPACES_DIR: join(config, "lab", "workspaces"),
     IPYTHONDIR: join(home, "ipython"),
     MPLCONFIGDIR: join(home, "matplotlib"),
+    // One of the server's extensions calls npm, which would write its log into the user's folder.
+    npm_config_cache: join(home, "npm"),
   };
 }
 

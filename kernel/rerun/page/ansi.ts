@@ -20,9 +20,10 @@ export function terminalToHtml(text: string): string {
   let html = "";
   let from = 0;
   for (const match of settled.matchAll(sequence)) {
-    html += drawn(settled.slice(from, match.index), pen);
+    const { index = 0 } = match;
+    html += drawn(settled.slice(from, index), pen);
     if (match[1] !== undefined) change(pen, match[1]);
-    from = match.index + match[0].length;
+    from = index + match[0].length;
   }
   return html + drawn(settled.slice(from), pen);
 }

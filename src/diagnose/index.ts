@@ -17,5 +17,6 @@ export type { PeriodInfluence } from "./leverage/periods.js";
 export { type Block, Leverage, type LeverageOptions, leverage } from "./leverage.js";
 export type { Scale } from "./spread/paths.js";
 export { Spread, type SpreadOptions, spread } from "./spread.js";
+export { Stability, type StabilityOptions, type StabilityRegime, stability } from "./stability.js";
 export type { Fitted } from "./subject.js";
 export type { Test } from "./test.js";

@@ -1,0 +1,28 @@
+export {
+  type Column,
+  countFilled,
+  countMissing,
+  isMissing,
+  type NumberColumn,
+  type TextColumn,
+} from "./column.js";
+export { findingsOf, gapsOf, missingStretches, type Stretch } from "./findings.js";
+export { type LoadSource, load } from "./load/load.js";
+export type { LoadOptions } from "./load/options.js";
+export { nearestName, suggestion } from "./nearest.js";
+export { type Progress, reportProgress, showProgressIn } from "./progress.js";
+export { requireRegular } from "./regular.js";
+export { type Aggregate, first, last, max, mean, min, sum } from "./reshape/aggregates.js";
+export { type Row, rowsOf } from "./reshape/define.js";
+export { displaySymbol, type MimeBundle, presentWith, type Remark, Result } from "./result.js";
+export { type TableParts, type TableSource, TimeTable } from "./table.js";
+export { countedSteps, type Step, type StepUnit, seasonLength, stepName } from "./time/step.js";
+export {
+  parsePeriod,
+  periodDate,
+  periodLabel,
+  periodLabels,
+  seasonOf,
+  spanText,
+  type TimeIndex,
+} from "./time/time-index.js";

@@ -8,7 +8,7 @@ export const style = `
   --page: #ffffff; --ink: #1d2329; --faint: #5b6570; --line: #d5dade; --well: #f5f7f8;
   --word: #0060a0; --text: #8a4b00; --figure: #00684c; --alarm: #b03a00; --alarm-well: #fdf1ea;
 }
-@media (prefers-color-scheme: dark) {
+@media screen and (prefers-color-scheme: dark) {
   :root {
     --page: #15191d; --ink: #e3e7ea; --faint: #9aa5ae; --line: #363e45; --well: #1e2429;
     --word: #6cbcf0; --text: #eab45f; --figure: #4cc9a0; --alarm: #ff9a66; --alarm-well: #2f2019;
@@ -54,7 +54,7 @@ footer { margin-top: 3rem; border-top: 1px solid var(--line); padding-top: 0.75r
 .ansi-yellow { color: var(--text); } .ansi-blue, .ansi-magenta { color: var(--word); }
 .ansi-black, .ansi-white { color: inherit; }
 @media print {
-  :root { color-scheme: light; --page: #ffffff; --ink: #000000; --faint: #444444; --line: #bbbbbb; --well: #f6f6f6; }
+  :root { color-scheme: light; --ink: #000000; }
   body { max-width: none; padding: 0; font-size: 10.5pt; }
   pre { white-space: pre-wrap; }
   .result, .output pre { overflow: visible; }

@@ -1,0 +1,74 @@
+import { colours, lineGrey } from "../chart/colours.js";
+import { number } from "../text/figures.js";
+import { type Html, html, trusted } from "../text/html.js";
+import type { Axis } from "./axis.js";
+
+/** An interval about an estimate. */
+export interface Interval {
+  readonly estimate: number;
+  readonly low: number;
+  readonly high: number;
+}
+
+/** How an interval is drawn. */
+export interface IntervalLook {
+  readonly colour?: string;
+  /** Height of the box, as CSS. Default 1.85em, which lets the zero marks of neighbouring rows meet. */
+  readonly height?: string;
+  readonly line?: "solid" | "dashed" | "dotted";
+}
+
+// Everything is drawn with borders: browsers print borders, but leave backgrounds out.
+const at = (percent: number) => `left:${percent.toFixed(2)}%`;
+const clip = (percent: number) => Math.min(100, Math.max(0, percent));
+
+/** The mark of zero (dashed) on an axis, if zero is on it. */
+function zeroMark(axis: Axis): Html {
+  const zero = axis.position(0);
+  if (zero < 0 || zero > 100) return trusted("");
+  return trusted(
+    `<span style="position:absolute;${at(zero)};top:0;height:100%;border-left:1px dashed ${lineGrey}"></span>`,
+  );
+}
+
+/**
+ * An interval drawn on an axis with zero marked. An interval without zero has a filled point and a thick line, one with
+ * zero a ring and a thin line. What lies beyond the axis ends in an arrow.
+ */
+export function drawInterval(axis: Axis, interval: Interval, look: IntervalLook = {}): Html {
+  const { estimate, low, high } = interval;
+  const box = (inner: Html) =>
+    html`<div style="position:relative;height:${look.height ?? "1.85em"};min-width:9em">${zeroMark(axis)}${inner}</div>`;
+  if (Number.isNaN(low) || Number.isNaN(high)) return box(trusted(""));
+  const colour = look.colour ?? colours.blue;
+  const sure = low > 0 || high < 0;
+  const [left, right] = [axis.position(low), axis.position(high)];
+  const [from, to] = [clip(left), clip(right)];
+  const thick = sure ? 3 : 2;
+  const pieces: string[] = [];
+  if (to > from) {
+    pieces.push(
+      `<span style="position:absolute;${at(from)};width:${(to - from).toFixed(2)}%;top:50%;margin-top:-${thick / 2}px;border-top:${thick}px ${look.line ?? "solid"} ${colour}"></span>`,
+    );
+  }
+  const arrow = (side: "left" | "right") =>
+    `<span style="position:absolute;${side}:0;top:50%;margin-top:-5px;width:0;height:0;border-top:5px solid transparent;border-bottom:5px solid transparent;border-${side === "left" ? "right" : "left"}:7px solid ${colour}"></span>`;
+  if (left < 0) pieces.push(arrow("left"));
+  if (right > 100) pieces.push(arrow("right"));
+  const point = axis.position(estimate);
+  if (point >= 0 && point <= 100) {
+    pieces.push(
+      sure
+        ? `<span style="position:absolute;${at(point)};top:50%;margin-left:-5px;margin-top:-5px;width:0;height:0;border:5px solid ${colour};border-radius:50%"></span>`
+        : `<span style="position:absolute;${at(point)};top:50%;margin-left:-5px;margin-top:-5px;width:6px;height:6px;border:2px solid ${colour};border-radius:50%;box-sizing:content-box"></span>`,
+    );
+  }
+  return box(trusted(pieces.join("")));
+}
+
+/** The figures on an axis, for the heading of the column that intervals are drawn in. */
+export function axisHead(axis: Axis, title: string): Html {
+  const label = (x: number) =>
+    `<span style="position:absolute;${at(axis.position(x))};width:6em;margin-left:-3em;text-align:center;white-space:nowrap">${number(x, 3)}</span>`;
+  return html`<div style="font-weight:bold;white-space:normal">${title}</div><div style="position:relative;height:1.3em;min-width:9em;font-weight:normal;opacity:0.8">${trusted(axis.ticks.map(label).join(""))}</div>`;
+}

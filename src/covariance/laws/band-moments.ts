@@ -1,0 +1,208 @@
+import { columnOf } from "../../numeric/index.js";
+import { type Kernel, lagWeights, lastLag } from "../kernels.js";
+import { dot } from "../shape/vectors.js";
+import type { ContrastDesign } from "./design.js";
+import { type Apply, lagOperator, toeplitzOperator } from "./toeplitz.js";
+
+/** Above this many products the moments cost more than the eigenvalues they save. */
+const AFFORDABLE = 4_000_000;
+/** Lags of the quadratic spectral kernel that the third and fourth moments take in, in bandwidths. */
+const REACH = 3;
+
+/**
+ * tr(A³) and tr(A⁴) for A = M D K D M, or nothing where they would cost too much. Exact for kernels that end at the
+ * bandwidth; for the quadratic spectral kernel lags beyond three bandwidths are left out, which moves them by less than
+ * two percent. The Daniell kernel dies out too slowly for that and gets none.
+ *
+ * KD²K is formed along its band: with A₀ = DKD, tr(A₀³) = Σ w_s²w_t² κ_{s−t} (KD²K)_{st} and tr(A₀⁴) = Σ w_s²w_t² (KD²K)²_{st}; the
+ * projection is taken care of by the k×k matrices Q'A₀ⁿQ.
+ */
+export function higherMoments(
+  design: ContrastDesign,
+  kernel: Kernel,
+  bandwidth: number,
+): { third: number; fourth: number } | undefined {
+  const { weights, basis } = design;
+  const n = weights.length;
+  if (kernel.name === "daniell") return undefined;
+  const reach = kernel.finite ? lastLag(kernel, bandwidth, n) : Math.ceil(REACH * bandwidth);
+  const last = Math.min(n - 1, reach);
+  const boxes = kernel.name === "bartlett" && last > 12;
+  if (n * (boxes ? 20 * last : 2 * last * last) > AFFORDABLE) return undefined;
+  const row = lagWeights(kernel, bandwidth, last);
+  const squares = weights.map((w) => w * w);
+  const raw = boxes ? boxBand(squares, bandwidth, last) : productBand(squares, row);
+  let { third, fourth } = raw;
+  if (basis.columns > 0) {
+    const K = kernel.finite ? lagOperator(kernel, bandwidth, n) : toeplitzOperator(row, n);
+    const G = projected(design, K);
+    third += -3 * G.trace3 + 3 * G.trace21 - G.trace111;
+    fourth += -4 * G.trace4 + 4 * G.trace31 + 2 * G.trace22 - 4 * G.trace211 + G.trace1111;
+  }
+  return { third, fourth };
+}
+
+/** Σ over the band, given row s of KD²K from the diagonal on. */
+function accumulate(
+  squares: Float64Array,
+  row: Float64Array,
+  s: number,
+  values: Float64Array,
+  sums: { third: number; fourth: number },
+): void {
+  const n = squares.length;
+  const last = row.length - 1;
+  const end = Math.min(2 * last, n - 1 - s);
+  let third = (squares[s]! * values[0]! * row[0]!) / 2;
+  let fourth = (squares[s]! * values[0]! * values[0]!) / 2;
+  for (let d = 1; d <= end; d++) {
+    const product = squares[s + d]! * values[d]!;
+    if (d <= last) third += product * row[d]!;
+    fourth += product * values[d]!;
+  }
+  sums.third += 2 * squares[s]! * third;
+  sums.fourth += 2 * squares[s]! * fourth;
+}
+
+/** By plain sums of products. */
+function productBand(squares: Float64Array, row: Float64Array): { third: number; fourth: number } {
+  const n = squares.length;
+  const last = row.length - 1;
+  const width = 2 * last + 1;
+  const symmetric = Float64Array.from({ length: width }, (_, i) => row[Math.abs(i - last)]!);
+  const padded = new Float64Array(n + 2 * last);
+  padded.set(squares, last);
+  const window = new Float64Array(width);
+  const values = new Float64Array(width);
+  const sums = { third: 0, fourth: 0 };
+  for (let s = 0; s < n; s++) {
+    if (squares[s] === 0) continue;
+    for (let i = 0; i < width; i++) window[i] = padded[s + i]! * symmetric[i]!;
+    for (let d = 0; d < width; d++) {
+      let sum = 0;
+      for (let i = d; i < width; i++) sum += window[i]! * symmetric[i - d]!;
+      values[d] = sum;
+    }
+    accumulate(squares, row, s, values, sums);
+  }
+  return sums;
+}
+
+/** For Bartlett weights each row is two moving sums of a window, or four for a bandwidth that is not whole. */
+function boxBand(squares: Float64Array, bandwidth: number, last: number): { third: number; fourth: number } {
+  const n = squares.length;
+  const width = 2 * last + 1;
+  const whole = Math.floor(bandwidth);
+  const above = (whole + 1) * (1 - whole / bandwidth);
+  const row = Float64Array.from({ length: last + 1 }, (_, j) => 1 - j / bandwidth);
+  const padded = new Float64Array(n + 2 * last);
+  padded.set(squares, last);
+  const window = new Float64Array(width);
+  const values = new Float64Array(width);
+  const sums = { third: 0, fourth: 0 };
+  const cumulated = new Float64Array(2 * width + whole + 4);
+  for (let s = 0; s < n; s++) {
+    if (squares[s] === 0) continue;
+    for (let i = 0; i < width; i++) window[i] = padded[s + i]! * row[Math.abs(i - last)]!;
+    values.fill(0);
+    addBoxes(window, whole, (1 - above) / whole, cumulated, values);
+    if (above > 0) addBoxes(window, whole + 1, above / (whole + 1), cumulated, values);
+    accumulate(squares, row, s, values, sums);
+  }
+  return sums;
+}
+
+/**
+ * values[d] += factor · Σ_i (length − |d + last − i|)⁺ window[i]: sums of `length` neighbours, then sums of `length` of those. The
+ * first row asked for, d = 0, lies at the window's middle.
+ */
+function addBoxes(
+  window: Float64Array,
+  length: number,
+  factor: number,
+  sums: Float64Array,
+  values: Float64Array,
+): void {
+  const width = window.length;
+  const middle = (width - 1) / 2;
+  const end = middle + width - 1 + length;
+  let running = 0;
+  for (let r = middle - length + 1; r < middle; r++) if (r >= 0 && r < width) running += window[r]!;
+  for (let r = middle; r < end; r++) {
+    if (r < width) running += window[r]!;
+    const out = r - length;
+    if (out >= middle - length + 1 && out >= 0 && out < width) running -= window[out]!;
+    sums[r - middle] = running;
+  }
+  running = 0;
+  for (let r = 0; r < length - 1; r++) running += sums[r]!;
+  for (let d = 0; d < width; d++) {
+    running += sums[d + length - 1]!;
+    values[d]! += factor * running;
+    running -= sums[d]!;
+  }
+}
+
+interface Projected {
+  trace3: number;
+  trace4: number;
+  trace21: number;
+  trace31: number;
+  trace22: number;
+  trace111: number;
+  trace211: number;
+  trace1111: number;
+}
+
+/** Traces of products of G_n = Q'A₀ⁿQ. */
+function projected({ weights, basis }: ContrastDesign, K: Apply): Projected {
+  const n = weights.length;
+  const k = basis.columns;
+  const held = new Float64Array(n);
+  const image = (x: Float64Array): Float64Array => {
+    const out = new Float64Array(n);
+    for (let t = 0; t < n; t++) held[t] = weights[t]! * x[t]!;
+    K(held, out);
+    for (let t = 0; t < n; t++) out[t]! *= weights[t]!;
+    return out;
+  };
+  const q = Array.from({ length: k }, (_, j) => columnOf(basis, j));
+  const once = q.map(image);
+  const twice = once.map(image);
+  const G1 = products(q, once);
+  const G2 = products(once, once);
+  const G3 = products(once, twice);
+  let trace4 = 0;
+  for (const y of twice) trace4 += dot(y, y);
+  const G11 = square(G1, k);
+  let trace3 = 0;
+  for (let j = 0; j < k; j++) trace3 += G3[j * k + j]!;
+  return {
+    trace3,
+    trace4,
+    trace21: dot(G2, G1),
+    trace31: dot(G3, G1),
+    trace22: dot(G2, G2),
+    trace111: dot(G11, G1),
+    trace211: dot(G2, G11),
+    trace1111: dot(G11, G11),
+  };
+}
+
+function products(a: readonly Float64Array[], b: readonly Float64Array[]): Float64Array {
+  const k = a.length;
+  const result = new Float64Array(k * k);
+  for (let j = 0; j < k; j++)
+    for (let i = 0; i <= j; i++) result[j * k + i] = result[i * k + j] = dot(a[i]!, b[j]!);
+  return result;
+}
+
+function square(G: Float64Array, k: number): Float64Array {
+  const result = new Float64Array(k * k);
+  for (let j = 0; j < k; j++) {
+    for (let l = 0; l < k; l++) {
+      for (let i = 0; i < k; i++) result[j * k + i]! += G[l * k + i]! * G[j * k + l]!;
+    }
+  }
+  return result;
+}

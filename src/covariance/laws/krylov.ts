@@ -1,0 +1,137 @@
+import { counterRandom } from "../../numeric/index.js";
+import { addTimes, dot, scale } from "../shape/vectors.js";
+import { bundles, type PowerSums, type Spectrum } from "./spectrum.js";
+import type { Apply } from "./toeplitz.js";
+import { tridiagonalEigenvalues } from "./tridiagonal.js";
+
+/** A positive semidefinite operator A on the complement of some columns, with exact traces of its powers. */
+export interface Form {
+  readonly size: number;
+  /** Dimension of the space that A acts on. */
+  readonly rank: number;
+  readonly apply: Apply;
+  /** Takes out of a vector, in place, what A does not act on. */
+  readonly project: (x: Float64Array) => void;
+  readonly sums: PowerSums;
+}
+
+/** Resolves a form's spectrum as far as a tail beyond c needs it; asked again, it goes on from where it stopped. */
+export type Resolver = (c: number, error: number) => Spectrum;
+
+/** Fewer steps than this are never worth saving; on a short sample they cost nothing. */
+const least = (size: number): number => (size <= 100 ? 12 : 3);
+const MOST = 200;
+
+/**
+ * The spectrum of a form by the Lanczos process with full reorthogonalisation, from a fixed start, until what it has
+ * not reached cannot move the tail beyond c by a share of more than `error` (see `resolved`).
+ */
+export function resolver(form: Form): Resolver {
+  const { size } = form;
+  const basis: Float64Array[] = [];
+  const diagonal: number[] = [];
+  const side: number[] = [];
+  const left = { ...form.sums };
+  let vector = start(form, basis, 0);
+  let spectrum: Spectrum | undefined;
+  return (c, error) => {
+    let grown = false;
+    while (
+      vector &&
+      basis.length < MOST &&
+      !(basis.length >= least(size) && resolved(left, form, c, error))
+    ) {
+      grown = true;
+      basis.push(vector);
+      const next = new Float64Array(size);
+      form.apply(vector, next);
+      const alpha = dot(vector, next);
+      diagonal.push(alpha);
+      subtract(left, diagonal, side);
+      orthogonalise(next, basis);
+      let beta = Math.sqrt(dot(next, next));
+      if (beta < 1e-2 * alpha) {
+        // Where most of the vector cancelled, rounding errors along the basis and outside the space are left.
+        form.project(next);
+        orthogonalise(next, basis);
+        beta = Math.sqrt(dot(next, next));
+      }
+      const coupled = beta > 1e-13 * form.sums.first;
+      side.push(coupled ? beta : 0);
+      if (coupled) {
+        scale(next, 1 / beta);
+        vector = next;
+      } else {
+        // An invariant subspace: the other copies of repeated eigenvalues are in its complement.
+        vector = start(form, basis, basis.length);
+      }
+    }
+    if (grown || !spectrum) spectrum = assemble(form, diagonal, side);
+    return spectrum;
+  };
+}
+
+/**
+ * Whether the rest of the spectrum may be replaced by two values. With four moments known the relative error of the tail is
+ * of the order of a sharp power of c²λ for the largest λ left; with two, of c⁶ times the third moment that is guessed.
+ * Both constants are measured.
+ */
+function resolved(left: PowerSums, form: Form, c: number, error: number): boolean {
+  if (!(left.first > 1e-12 * form.sums.first) || left.second <= 0) return true;
+  if (left.third !== undefined) {
+    const largest = Math.max(...bundles(left).map(({ value }) => value));
+    return c * c * largest < 3 * error ** (1 / 4);
+  }
+  return left.second ** 2 * c ** 6 < 12 * error * left.first;
+}
+
+/** Takes out of the power sums what the last row of the tridiagonal matrix adds to its traces. */
+function subtract(left: { -readonly [P in keyof PowerSums]: PowerSums[P] }, d: number[], e: number[]): void {
+  const m = d.length - 1;
+  const a = d[m]!;
+  const b = m > 0 ? e[m - 1]! : 0;
+  const before = m > 0 ? d[m - 1]! : 0;
+  const earlier = m > 1 ? e[m - 2]! : 0;
+  const bb = b * b;
+  left.first -= a;
+  left.second -= a * a + 2 * bb;
+  if (left.third !== undefined) left.third -= a ** 3 + 3 * bb * (a + before);
+  if (left.fourth !== undefined) {
+    left.fourth -=
+      a ** 4 + 4 * bb * (a * a + a * before + before * before) + 2 * bb * bb + 4 * bb * earlier * earlier;
+  }
+}
+
+function assemble(form: Form, diagonal: number[], side: number[]): Spectrum {
+  const leading = Float64Array.from(diagonal);
+  tridiagonalEigenvalues(leading, Float64Array.from(side));
+  const left = { ...form.sums };
+  for (let i = 0; i < leading.length; i++) {
+    const value = Math.max(0, leading[i]!);
+    leading[i] = value;
+    left.first -= value;
+    left.second -= value ** 2;
+    if (left.third !== undefined) left.third -= value ** 3;
+    if (left.fourth !== undefined) left.fourth -= value ** 4;
+  }
+  const exhausted = leading.length >= form.rank || left.first <= 1e-12 * form.sums.first || left.second <= 0;
+  return { leading, rest: exhausted ? [] : bundles(left) };
+}
+
+/** A unit vector in the form's space, orthogonal to the basis; undefined when there is none left. */
+function start(form: Form, basis: readonly Float64Array[], replicate: number): Float64Array | undefined {
+  if (basis.length >= form.rank) return undefined;
+  const vector = new Float64Array(form.size);
+  counterRandom(20_250_101, replicate).fillNormal(vector);
+  form.project(vector);
+  orthogonalise(vector, basis);
+  orthogonalise(vector, basis);
+  const length = Math.sqrt(dot(vector, vector));
+  if (!(length > 1e-10)) return undefined;
+  scale(vector, 1 / length);
+  return vector;
+}
+
+function orthogonalise(x: Float64Array, basis: readonly Float64Array[]): void {
+  for (let i = basis.length - 1; i >= 0; i--) addTimes(x, -dot(x, basis[i]!), basis[i]!);
+}

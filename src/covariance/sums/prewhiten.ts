@@ -1,0 +1,124 @@
+import { identity, type Matrix, matrix, multiply, symmetricEigen, transpose } from "../../numeric/index.js";
+import { inverse } from "../shape/inverse.js";
+import { congruence } from "../shape/sandwich.js";
+import { dot } from "../shape/vectors.js";
+import { copyRows, type Series } from "./series.js";
+
+/** Singular values of the autoregression beyond this are set to it (Andrews and Monahan 1992). */
+export const SINGULAR_BOUND = 0.97;
+
+export interface Prewhitened {
+  /** The residuals of the autoregression, n − 1 rows, in standardised coordinates. */
+  readonly series: Series;
+  /** From standardised coordinates back to those of the scores, k×r. */
+  readonly loading: Matrix;
+  /** Largest singular value before the bound. */
+  readonly largestSingularValue: number;
+  readonly bounded: boolean;
+  /** Directions in which the scores move at all; less than k when a score is always zero. */
+  readonly rank: number;
+  /** A sum over the residuals to a sum over the scores: (I − A)⁻¹ S (I − A)⁻ᵀ, times n/(n − 1) for the lost period. */
+  recolour(sum: Matrix): Matrix;
+}
+
+/**
+ * A first-order vector autoregression of the scores, as Andrews and Monahan (1992, Econometrica 60) prewhiten, but fitted to
+ * scores standardised by Γ_0^(−1/2): singular values of raw coefficients change with the units and origins of the
+ * regressors, these do not.
+ */
+export function prewhiten(series: Series): Prewhitened {
+  const { rows: n, columns: k } = series.columns;
+  const columns = Array.from({ length: k }, (_, j) => {
+    const column = new Float64Array(n);
+    copyRows(series, j, 0, n, column, 0);
+    return column;
+  });
+  const { standardise, loading, rank } = standardisation(columns);
+  const cross = productsOf(columns, 1, n, 0, n - 1);
+  const past = productsOf(columns, 0, n - 1, 0, n - 1);
+  const lagged = multiply(multiply(standardise, cross), transpose(standardise));
+  const earlier = congruence(standardise, past);
+  const { A, largest } = bound(multiply(lagged, inverse(earlier)));
+  const residuals = residualsOf(columns, standardise, A);
+  const back = inverse(minus(identity(rank), A));
+  const colour = multiply(loading, back);
+  return {
+    series: { columns: residuals },
+    loading,
+    largestSingularValue: largest,
+    bounded: largest > SINGULAR_BOUND,
+    rank,
+    recolour: (sum) => congruence(colour, sum, n / (n - 1)),
+  };
+}
+
+/** Λ^(−1/2)U' and its inverse UΛ^(1/2) from Γ_0 = UΛU', without directions in which nothing moves. */
+function standardisation(columns: Float64Array[]): { standardise: Matrix; loading: Matrix; rank: number } {
+  const k = columns.length;
+  const n = columns[0]!.length;
+  const { values, vectors } = symmetricEigen(productsOf(columns, 0, n, 0, n));
+  let rank = 0;
+  while (rank < k && values[rank]! > 1e-13 * values[0]!) rank++;
+  const standardise = matrix(rank, k);
+  const loading = matrix(k, rank);
+  for (let r = 0; r < rank; r++) {
+    const root = Math.sqrt(values[r]! / n);
+    for (let i = 0; i < k; i++) {
+      const u = vectors.data[r * k + i]!;
+      standardise.data[i * rank + r] = u / root;
+      loading.data[r * k + i] = u * root;
+    }
+  }
+  return { standardise, loading, rank };
+}
+
+/** Σ a_t b_t' with a_t the rows from a0…a1 and b_t those from b0…b1. */
+function productsOf(columns: Float64Array[], a0: number, a1: number, b0: number, b1: number): Matrix {
+  const k = columns.length;
+  const result = matrix(k, k);
+  for (let j = 0; j < k; j++) {
+    const right = columns[j]!.subarray(b0, b1);
+    for (let i = 0; i < k; i++) result.data[j * k + i] = dot(columns[i]!.subarray(a0, a1), right);
+  }
+  return result;
+}
+
+/** A with its singular values held at the bound: A C min(1, bound/δ) C' for A = BΔC'. */
+function bound(A: Matrix): { A: Matrix; largest: number } {
+  const r = A.rows;
+  const { values, vectors } = symmetricEigen(multiply(transpose(A), A));
+  const largest = Math.sqrt(Math.max(0, values[0] ?? 0));
+  if (!(largest > SINGULAR_BOUND)) return { A, largest };
+  const shrink = matrix(r, r);
+  for (let i = 0; i < r; i++) {
+    const delta = Math.sqrt(Math.max(0, values[i]!));
+    shrink.data[i * r + i] = Math.min(1, SINGULAR_BOUND / delta);
+  }
+  return { A: multiply(A, congruence(vectors, shrink)), largest };
+}
+
+/** g̃_t − A g̃_{t−1} for t ≥ 2. */
+function residualsOf(columns: Float64Array[], standardise: Matrix, A: Matrix): Matrix {
+  const n = columns[0]!.length;
+  const r = A.rows;
+  const carry = multiply(A, standardise);
+  const result = matrix(n - 1, r);
+  for (let i = 0; i < r; i++) {
+    const out = result.data.subarray(i * (n - 1), (i + 1) * (n - 1));
+    for (let j = 0; j < columns.length; j++) {
+      const column = columns[j]!;
+      const present = standardise.data[j * r + i]!;
+      const past = carry.data[j * r + i]!;
+      for (let t = 1; t < n; t++) out[t - 1]! += present * column[t]! - past * column[t - 1]!;
+    }
+  }
+  return result;
+}
+
+function minus(a: Matrix, b: Matrix): Matrix {
+  return matrix(
+    a.rows,
+    a.columns,
+    a.data.map((value, i) => value - b.data[i]!),
+  );
+}

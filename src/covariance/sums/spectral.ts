@@ -1,0 +1,100 @@
+import { fft, type Matrix, matrix } from "../../numeric/index.js";
+import { copyRows, type Series } from "./series.js";
+
+/** The Fourier transforms of the columns at frequencies 0 to N/2, N a power of two. */
+interface Spectra {
+  readonly size: number;
+  readonly re: readonly Float64Array[];
+  readonly im: readonly Float64Array[];
+}
+
+const known = new WeakMap<Series, Spectra>();
+/** Long series are kept one at a time: their transforms are as large as the data. */
+const LONG = 100_000;
+let latestLong: { series: WeakRef<Series>; spectra: Spectra } | undefined;
+
+/**
+ * Σ_j κ_j Σ_t v_t v'_{t−j} for many lags: N⁻¹ Σ_f κ̂_f V_f V_f*, with V the transform of the series padded to N ≥ n + last.
+ * The transforms are made once per series, after which a kernel and bandwidth cost one transform of the weights.
+ */
+export function spectralSum(series: Series, weights: Float64Array): Matrix {
+  const { rows: n, columns: k } = series.columns;
+  const last = weights.length - 1;
+  const { size, re, im } = spectraOf(series, n + last);
+  const window = transformedWeights(weights, size);
+  const half = size / 2;
+  const result = matrix(k, k);
+  const weighted = new Float64Array(half + 1);
+  const weightedIm = new Float64Array(half + 1);
+  for (let j = 0; j < k; j++) {
+    for (let f = 0; f <= half; f++) {
+      weighted[f] = window[f]! * re[j]![f]!;
+      weightedIm[f] = window[f]! * im[j]![f]!;
+    }
+    for (let i = 0; i <= j; i++) {
+      const a = re[i]!;
+      const b = im[i]!;
+      let even = 0;
+      let odd = 0;
+      for (let f = 0; f < half; f += 2) {
+        even += weighted[f]! * a[f]! + weightedIm[f]! * b[f]!;
+        odd += weighted[f + 1]! * a[f + 1]! + weightedIm[f + 1]! * b[f + 1]!;
+      }
+      result.data[j * k + i] = result.data[i * k + j] = even + odd + weighted[half]! * a[half]!;
+    }
+  }
+  return result;
+}
+
+/** κ̂ at frequencies 0 to N/2, with the weights that a half spectrum needs and 1/N taken in. */
+function transformedWeights(weights: Float64Array, size: number): Float64Array {
+  const re = new Float64Array(size);
+  const im = new Float64Array(size);
+  re.set(weights);
+  for (let j = 1; j < weights.length; j++) re[size - j] = weights[j]!;
+  fft(re, im);
+  const half = size / 2;
+  const window = re.subarray(0, half + 1);
+  for (let f = 0; f <= half; f++) window[f]! *= (f === 0 || f === half ? 1 : 2) / size;
+  return window;
+}
+
+function spectraOf(series: Series, length: number): Spectra {
+  const long = series.columns.rows > LONG;
+  const held = long && latestLong?.series.deref() === series ? latestLong.spectra : known.get(series);
+  const size = 2 ** Math.ceil(Math.log2(Math.max(length, 4)));
+  if (held && held.size >= size) return held;
+  const spectra = transform(series, size);
+  if (long) latestLong = { series: new WeakRef(series), spectra };
+  else known.set(series, spectra);
+  return spectra;
+}
+
+/** Two real columns share one complex transform. */
+function transform(series: Series, size: number): Spectra {
+  const { rows: n, columns: k } = series.columns;
+  const half = size / 2;
+  const re: Float64Array[] = [];
+  const im: Float64Array[] = [];
+  const x = new Float64Array(size);
+  const y = new Float64Array(size);
+  for (let j = 0; j < k; j += 2) {
+    x.fill(0);
+    y.fill(0);
+    copyRows(series, j, 0, n, x, 0);
+    if (j + 1 < k) copyRows(series, j + 1, 0, n, y, 0);
+    fft(x, y);
+    const parts = [0, 1, 2, 3].map(() => new Float64Array(half + 1));
+    const [aRe, aIm, bRe, bIm] = parts as [Float64Array, Float64Array, Float64Array, Float64Array];
+    for (let f = 0; f <= half; f++) {
+      const g = f === 0 ? 0 : size - f;
+      aRe[f] = (x[f]! + x[g]!) / 2;
+      aIm[f] = (y[f]! - y[g]!) / 2;
+      bRe[f] = (y[f]! + y[g]!) / 2;
+      bIm[f] = (x[g]! - x[f]!) / 2;
+    }
+    re.push(aRe, bRe);
+    im.push(aIm, bIm);
+  }
+  return { size, re: re.slice(0, k), im: im.slice(0, k) };
+}

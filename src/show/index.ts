@@ -1,11 +1,15 @@
 // The door of this room. Loading it says how every kind of result is shown.
 import { showCharts } from "./presenters/chart.js";
 import { dependenceShowing } from "./presenters/dependence.js";
+import { fitShowing } from "./presenters/fit.js";
 import { tableShowing } from "./presenters/table.js";
+import { timeTableShowing } from "./presenters/time-table.js";
 import { show } from "./showing.js";
 
 showCharts();
 show("table", tableShowing);
+show("time-table", timeTableShowing);
+show("fit", fitShowing);
 show("dependence", dependenceShowing);
 
 export { Chart } from "./chart/chart.js";

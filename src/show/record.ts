@@ -10,6 +10,8 @@ export interface LagbookRecord {
   readonly lagbook: 1;
   readonly kind: string;
   readonly value: Record<string, unknown>;
+  /** Further figures on the card. */
+  readonly shown?: Record<string, unknown>;
   readonly versions: { readonly node: string; readonly lagbook: string };
   readonly seed?: number | string;
   /** Hash of the data that the result came from. */
@@ -17,12 +19,13 @@ export interface LagbookRecord {
 }
 
 /** The record of a result. Numbers that JSON has no writing for (NaN, infinities) become null. */
-export function recordOf(result: Result): LagbookRecord {
+export function recordOf(result: Result, shown?: Record<string, unknown>): LagbookRecord {
   const { seed, fingerprint } = result as { seed?: unknown; fingerprint?: unknown };
   return {
     lagbook: 1,
     kind: result.kind,
     value: plain(result.toJSON()) as Record<string, unknown>,
+    ...(shown === undefined ? {} : { shown: plain(shown) as Record<string, unknown> }),
     versions: { node: process.versions.node, lagbook: lagbookVersion() },
     ...(typeof seed === "number" || typeof seed === "string" ? { seed } : {}),
     ...(typeof fingerprint === "string" ? { fingerprint } : {}),

@@ -27,6 +27,8 @@ export interface Card {
   readonly remarks?: readonly Remark[];
   readonly parts: readonly Part[];
   readonly fingerprint?: string;
+  /** Figures on the card that the result's own record does not hold, for the record. */
+  readonly shown?: Record<string, unknown>;
 }
 
 const severity = { note: "Note", caution: "Caution" } as const;
@@ -36,7 +38,7 @@ export function bundle(result: Result, card: Card): MimeBundle {
   return {
     "text/plain": plainCard(card),
     "text/html": htmlCard(card).markup,
-    [recordType]: recordOf(result),
+    [recordType]: recordOf(result, card.shown),
   };
 }
 
@@ -51,7 +53,19 @@ export function htmlCard(card: Card): Html {
     (fact) => html`<span style="opacity:0.8"> · ${fact}</span>`,
   )}</div>${
     finding !== undefined && html`<div style="margin:0 0 0.5em 0;font-size:1.1em">${finding}</div>`
-  }${remarks.map(remarkHtml)}${parts.map(partHtml)}<div style="margin:0.5em 0 0 0;${small}">${footer(card).join(" · ")}</div></div>`;
+  }${remarksHtml(remarks)}${parts.map(partHtml)}<div style="margin:0.5em 0 0 0;${small}">${footer(card).join(" · ")}</div></div>`;
+}
+
+// Many remarks would push the figures out of sight: cautions first, and what is over is folded away.
+const openRemarks = 5;
+
+function remarksHtml(remarks: readonly Remark[]): Html {
+  if (remarks.length <= openRemarks + 1) return html`${remarks.map(remarkHtml)}`;
+  const sorted = [...remarks].sort(
+    (a, b) => Number(b.severity === "caution") - Number(a.severity === "caution"),
+  );
+  const folded = sorted.slice(openRemarks).map(remarkHtml);
+  return html`${sorted.slice(0, openRemarks).map(remarkHtml)}<details style="margin:0.2em 0 0.5em 0"><summary style="cursor:pointer">${folded.length} more remarks</summary><div style="margin:0.3em 0 0 1em">${folded}</div></details>`;
 }
 
 function remarkHtml({ severity: kind, text }: Remark): Html {

@@ -1,11 +1,17 @@
 import { colours, lineGrey } from "./colours.js";
+import { withGaps } from "./gaps.js";
 import { thin } from "./thin.js";
 
 const size = { width: 180, height: 28 };
 
 /** A small line of a column over time, as SVG: no axes; missing periods break it, filled ones are marked below it. */
-export function spark(x: ArrayLike<number>, y: ArrayLike<number>, filled?: ArrayLike<number>): string {
+export function spark(
+  ordinals: ArrayLike<number>,
+  values: ArrayLike<number>,
+  filled?: ArrayLike<number>,
+): string {
   const { width, height } = size;
+  const { x, y } = withGaps(ordinals, values);
   const few = thin({ x, y }, width / 2);
   const from = x[0] ?? 0;
   const span = (x[x.length - 1] ?? 1) - from || 1;
@@ -26,7 +32,6 @@ export function spark(x: ArrayLike<number>, y: ArrayLike<number>, filled?: Array
   let run = 0;
   for (let i = 0; i <= few.x.length; i++) {
     const value = i < few.x.length ? few.y[i]! : Number.NaN;
-    // Points next to each other in a thinned line are neighbours for the eye; in a whole one a step missing is a gap.
     if (!Number.isFinite(value)) {
       if (run === 1) alone.push(`<circle cx="${px(few.x[i - 1]!)}" cy="${py(few.y[i - 1]!)}" r="1.2"/>`);
       run = 0;
@@ -35,19 +40,16 @@ export function spark(x: ArrayLike<number>, y: ArrayLike<number>, filled?: Array
     path += `${run === 0 ? "M" : "L"}${px(few.x[i]!)} ${py(value)}`;
     run++;
   }
-  let marks = "";
-  if (filled) {
-    const step = Math.max(1, Math.floor(filled.length / 2000));
-    for (let i = 0; i < filled.length; i += step) {
-      if (filled[i]) marks += `M${px(x[i]!)} ${height - 3}v3`;
-    }
-  }
+  const marks = new Set<string>();
+  if (filled) for (let i = 0; i < filled.length; i++) if (filled[i]) marks.add(px(ordinals[i]!));
   return [
     `<svg xmlns="http://www.w3.org/2000/svg" width="${width}" height="${height}" viewBox="0 0 ${width} ${height}">`,
     `<path d="M0 ${height - 0.5}H${width}" stroke="${lineGrey}" stroke-opacity="0.4"/>`,
     `<path d="${path}" fill="none" stroke="${colours.blue}" stroke-width="1.2" stroke-linejoin="round"/>`,
     alone.length > 0 ? `<g fill="${colours.blue}">${alone.join("")}</g>` : "",
-    marks === "" ? "" : `<path d="${marks}" stroke="${colours.vermillion}" stroke-width="1.5"/>`,
+    marks.size === 0
+      ? ""
+      : `<path d="${[...marks].map((at) => `M${at} ${height - 3}v3`).join("")}" stroke="${colours.vermillion}" stroke-width="1.5"/>`,
     "</svg>",
   ].join("");
 }

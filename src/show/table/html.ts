@@ -7,6 +7,8 @@ export interface DrawnColumn {
   readonly cells: readonly Html[];
   /** Smallest width, as CSS. */
   readonly width: string;
+  /** Whether it takes what room there is. Default true. */
+  readonly stretch?: boolean;
 }
 
 /** How a table is drawn in HTML. */
@@ -43,7 +45,7 @@ export function htmlTable(table: TableModel, options: HtmlTableOptions = {}): Ht
   const two = runs.some((run) => run.title !== undefined && run.columns.some((c) => c.title !== ""));
   const over: Html[] = [];
   let position = 0;
-  const drawnHead = drawn && header(drawn.head, "left", 1, two ? 2 : 1, `min-width:${drawn.width};width:40%`);
+  const drawnHead = drawn && header(drawn.head, "left", 1, two ? 2 : 1, `min-width:${drawn.width};width:${drawn.stretch === false ? drawn.width : "40%"}`);
   for (const run of runs) {
     if (position === at && drawnHead) over.push(drawnHead);
     const alone = run.title === undefined;

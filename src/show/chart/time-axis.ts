@@ -1,0 +1,35 @@
+import { periodDate, type Step } from "../../data/index.js";
+
+/** How periods stand on a horizontal axis. */
+export interface TimeScale {
+  /** The value of a period on the axis: milliseconds since 1970 in UTC, or the whole number that it is. */
+  readonly at: (ordinal: number) => number;
+  /** The encoding of the axis for a field that holds such values. */
+  readonly encoding: (field: string, title?: string | null) => Record<string, unknown>;
+}
+
+/** The horizontal axis for a step: time in UTC, whatever zone the viewer is in; plain numbers for whole numbers. */
+export function timeScale(step: Step): TimeScale {
+  if (step.unit === "integer") {
+    return {
+      at: (ordinal) => ordinal * step.count + (step.offset ?? 0),
+      encoding: (field, title = null) => ({
+        field,
+        type: "quantitative",
+        title,
+        scale: { zero: false, nice: false },
+        axis: { format: "d", tickMinStep: 1, grid: false },
+      }),
+    };
+  }
+  return {
+    at: (ordinal) => periodDate(step, ordinal).getTime(),
+    encoding: (field, title = null) => ({
+      field,
+      type: "temporal",
+      title,
+      scale: { type: "utc", nice: false },
+      axis: { grid: false, labelOverlap: true, tickCount: 8 },
+    }),
+  };
+}

@@ -1,0 +1,136 @@
+import { createRequire, SourceMap } from "node:module";
+import type { CompletionInfo, Converter, Diagnostic } from "./converter.js";
+import { annotateAny, applyEdits, awaitsToYields, prepare, type Rewritten } from "./rewrite.js";
+import { adaptTypeScript, lastMaps, packageFolder, ts } from "./typescript.js";
+
+/** A problem that the type checker found in a cell. */
+export interface Problem {
+  readonly message: string;
+  /** 0-based line and character in the user's source. */
+  readonly line: number;
+  readonly character: number;
+  readonly length: number;
+  /** File it is in, when it is not the cell. */
+  readonly file?: string;
+}
+
+/** A cell compiled: its script, or what is wrong with it. */
+export type Compiled =
+  | { readonly problems: readonly Problem[] }
+  | {
+      /** CommonJS body that reads `exports` and `require`; a generator's body when `style` is "generator". */
+      readonly script: string;
+      readonly style: "plain" | "generator" | "async";
+      /** Property of `exports` that holds the last expression's value. */
+      readonly lastValue: string | undefined;
+      /** Declarations of all names so far, for the next cell. */
+      readonly declarations: string;
+      /** CommonJS of local TypeScript files that the cell imports. */
+      readonly sideOutputs: readonly { path: string; data: string }[];
+      /** 0-based line in the user's source of a 0-based line of the script, where known. */
+      sourceLine(line: number, character: number): number | undefined;
+    };
+
+/** Turns TypeScript cells into JavaScript; the one place that knows the compiler. */
+export interface Compiler {
+  /** The converter in the form that tslab's executor takes, whose `convert` returns what `compile` last made. */
+  readonly converter: Converter;
+  compile(declarations: string, source: string): Compiled;
+  complete(declarations: string, source: string, offset: number): CompletionInfo;
+  inspect(declarations: string, source: string, offset: number): ReturnType<Converter["inspect"]>;
+  close(): void;
+}
+
+/** Codes of "the type of this name cannot be written down": a declaration file's trouble, not the user's. */
+const unwritable = (code: number) => code === 2742 || code === 7056 || (code >= 4020 && code <= 4118);
+
+/** A compiler for one session, with the notebook's folder as the present one. Takes about a second. */
+export function createCompiler(): Compiler {
+  adaptTypeScript();
+  const require = createRequire(import.meta.url);
+  const { createConverter } = require("tslab/dist/converter.js") as typeof import("tslab/dist/converter.js");
+  const converter = createConverter() as unknown as Converter;
+  return {
+    converter,
+    compile: (declarations, source) => compile(converter, declarations, source),
+    complete(declarations, source, offset) {
+      const cell = applyEdits(source, prepare(source));
+      const found = converter.complete(declarations, cell.text, cell.rewritten(offset));
+      return { ...found, start: cell.original(found.start), end: cell.original(found.end) };
+    },
+    inspect(declarations, source, offset) {
+      const cell = applyEdits(source, prepare(source));
+      return converter.inspect(declarations, cell.text, cell.rewritten(offset));
+    },
+    close: () => converter.close(),
+  };
+}
+
+function compile(converter: Converter, declarations: string, source: string): Compiled {
+  const edits = prepare(source);
+  let cell = applyEdits(source, edits);
+  let converted = converter.convert(declarations, cell.text);
+  const untypable = converted.diagnostics.filter(({ code }) => unwritable(code));
+  if (untypable.length > 0 && untypable.length === converted.diagnostics.length) {
+    const offsets = untypable.map(({ start }) => cell.original(start.offset));
+    cell = applyEdits(source, [...edits, ...annotateAny(source, offsets)]);
+    converted = converter.convert(declarations, cell.text);
+  }
+  if (converted.diagnostics.length > 0) return { problems: problemsOf(converted.diagnostics, cell, source) };
+  const script = converted.output ?? "";
+  const yields = converted.hasToplevelAwait ? awaitsToYields(script) : undefined;
+  const maps = lastMaps;
+  return {
+    script: yields ?? script,
+    style: yields !== undefined ? "generator" : converted.hasToplevelAwait ? "async" : "plain",
+    lastValue: converted.lastExpressionVar,
+    declarations: converted.declOutput ?? "",
+    sideOutputs: converted.sideOutputs ?? [],
+    sourceLine: (line, character) => sourceLine(maps, line, character),
+  };
+}
+
+/** Lines of the cell are one less than those of the compiled file, which begins with a line of the converter's own. */
+function sourceLine(maps: typeof lastMaps, line: number, character: number): number | undefined {
+  const decode = (map: string | undefined) =>
+    map === undefined ? undefined : new SourceMap(JSON.parse(Buffer.from(map, "base64").toString("utf8")));
+  const second = decode(maps.second)?.findEntry(line, character);
+  if (!second || !("originalLine" in second)) return undefined;
+  const first = decode(maps.first)?.findEntry(second.originalLine, second.originalColumn);
+  if (!first || !("originalLine" in first)) return undefined;
+  return first.originalLine - 1;
+}
+
+function problemsOf(diagnostics: readonly Diagnostic[], cell: Rewritten, source: string): Problem[] {
+  const problems = diagnostics.map((diagnostic): Problem => {
+    const start = diagnostic.fileName ? diagnostic.start.offset : cell.original(diagnostic.start.offset);
+    const end = diagnostic.fileName ? diagnostic.end.offset : cell.original(diagnostic.end.offset);
+    const place = diagnostic.fileName
+      ? { line: diagnostic.start.line, character: diagnostic.start.character }
+      : placeOf(source, start);
+    return {
+      message: diagnostic.messageText,
+      ...place,
+      length: Math.max(1, end - start),
+      ...(diagnostic.fileName ? { file: diagnostic.fileName } : {}),
+    };
+  });
+  // A chain of reasons comes as several diagnostics at one place: the first says it, the rest indent under it.
+  return problems.filter(
+    (problem, i) =>
+      !problems.slice(0, i).some((other) => other.line === problem.line && other.message === problem.message),
+  );
+}
+
+function placeOf(source: string, offset: number): { line: number; character: number } {
+  const before = source.slice(0, offset);
+  const line = before.split("\n").length - 1;
+  return { line, character: offset - (before.lastIndexOf("\n") + 1) };
+}
+
+/** Modules that a source imports, as written. */
+export function importsOf(source: string): string[] {
+  return ts.preProcessFile(source, true, true).importedFiles.map(({ fileName }) => fileName);
+}
+
+export { packageFolder };

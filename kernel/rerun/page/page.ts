@@ -27,7 +27,7 @@ export function notebookToPage(notebook: Notebook, options: PageOptions): string
   const { failure } = options;
   const stopped = failure
     ? `<p class="stopped"><strong>This run stopped at cell ${failure.cell}</strong> [${failure.execution}]: ` +
-      `${escapeHtml(failure.message)}. ${left(failure.left)}</p>\n`
+      `${escapeHtml(failure.message.replace(/\.$/, ""))}. ${left(failure.left)}</p>\n`
     : "";
   const cells = notebook.cells.map((cell) => cellToHtml(cell, options.folder)).join("\n");
   return `<!DOCTYPE html>

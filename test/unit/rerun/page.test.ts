@@ -143,6 +143,6 @@ test("streams and tracebacks keep colours and lose control codes; a progress lin
 });
 
 test("a run that stopped says where, why and how much is left", () => {
-  const html = page([code("x")], { failure: { cell: 4, execution: 3, message: "E: <v>", left: 2 } });
+  const html = page([code("x")], { failure: { cell: 4, execution: 3, message: "E: <v>.", left: 2 } });
   assert.match(html, /stopped at cell 4<\/strong> \[3\]: E: &lt;v&gt;\. 2 code cells after it did not run/);
 });

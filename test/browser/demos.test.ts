@@ -17,7 +17,7 @@ import {
   save,
   theme,
 } from "./lab.js";
-import { cutOff, faintText, pixels } from "./looks.js";
+import { cutOff, faintText, pixels, unfold } from "./looks.js";
 
 const skip = without("python", "chromium");
 const outputs = ".jp-NotebookPanel:not(.lm-mod-hidden) .jp-OutputArea-output";
@@ -85,6 +85,7 @@ for (const name of demoNotebooks()) {
     const light = await shot("light");
     assert.ok(light.luminance > 0.75, `light, yet of luminance ${light.luminance}`);
     assert.ok(light.colours > 30, `${light.colours} colours`);
+    await unfold(page, outputs);
     assert.deepEqual(await faintText(page, outputs, 4.5), [], "text is easy to read in light");
     await theme(page, "JupyterLab Dark");
     const dark = await shot("dark");

@@ -125,3 +125,10 @@ export function cutOff(page: Page, within: string): Promise<string[]> {
     return found.slice(0, 10);
   }, within);
 }
+
+/** Opens everything that is folded away, so that it is looked at too. */
+export function unfold(page: Page, within: string): Promise<void> {
+  return page.locator(`${within} details`).evaluateAll((details) => {
+    for (const detail of details as HTMLDetailsElement[]) detail.open = true;
+  });
+}

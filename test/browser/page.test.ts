@@ -9,7 +9,7 @@ import { places } from "../../kernel/install/index.js";
 import { without } from "../machine/needs.js";
 import { fixturePath, root } from "../root.js";
 import { demoNotebooks, newPage, openChromium } from "./lab.js";
-import { cutOff, faintText, pixels } from "./looks.js";
+import { cutOff, faintText, pixels, unfold } from "./looks.js";
 
 const skip = without("chromium");
 const pictures = join(places().state, "screenshots");
@@ -60,6 +60,7 @@ for (const [name, path] of sources) {
       return pixels(browser, png);
     };
     assert.ok((await shot("light")).luminance > 0.8);
+    await unfold(page, "main");
     assert.deepEqual(await faintText(page, "main", 4.5), [], "text is easy to read in light");
     await page.emulateMedia({ colorScheme: "dark" });
     assert.ok((await shot("dark")).luminance < 0.35);

@@ -15,7 +15,7 @@ import {
   save,
   theme,
 } from "./lab.js";
-import { faintText } from "./looks.js";
+import { faintText, unfold } from "./looks.js";
 
 const skip = without("python", "chromium");
 const outputs = ".jp-NotebookPanel:not(.lm-mod-hidden) .jp-OutputArea-output";
@@ -60,6 +60,7 @@ test("a notebook that is opened again untrusted still shows its cards", { skip }
   assert.equal(await cards.count(), held.length, "every card is shown as HTML");
   const after = await page.locator(outputs).allInnerTexts();
   assert.deepEqual(after, before, "and says what it said when it was trusted");
+  await unfold(page, outputs);
   assert.deepEqual(await faintText(page, outputs, 4.5), []);
   await theme(page, "JupyterLab Dark");
   assert.deepEqual(await faintText(page, outputs, 4.5), []);

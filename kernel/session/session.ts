@@ -4,6 +4,7 @@ import { type CellContext, cellContext } from "./cell-context.js";
 import { type Compiler, createCompiler, importsOf } from "./compiler/compiler.js";
 import { type Completions, complete } from "./complete.js";
 import { type CellFailure, type CellScript, thrownFailure, typeFailure } from "./failure.js";
+import { guardExit } from "./guard-exit.js";
 import { type Inspection, inspectAt } from "./inspect.js";
 import { type Completeness, isComplete } from "./is-complete.js";
 import { CellModules, cellNames } from "./modules.js";
@@ -67,6 +68,7 @@ export async function createSession(options: SessionOptions): Promise<Session> {
   const before = process.cwd();
   process.chdir(options.directory);
   captureStreams();
+  guardExit();
   // Deep enough that the user's own line is still among the frames when a cell function throws.
   Error.stackTraceLimit = Math.max(Error.stackTraceLimit, 60);
   const session = new OpenSession(options, createCompiler(), before);

@@ -1,0 +1,1 @@
+export { startKernel } from "./start.js";

@@ -40,6 +40,8 @@ export interface CorrelogramPoint {
 interface DependenceFields extends DiagnosticFields {
   /** Whether the family of tests that fits this model rejects independence (Holm, at 1 − level). */
   readonly dependent: boolean;
+  /** Smallest p of that family after the adjustment. */
+  readonly p: number;
   /** The test the finding rests on. */
   readonly decisive: Test | undefined;
   /** Autocorrelations of the residuals. */
@@ -55,6 +57,7 @@ interface DependenceFields extends DiagnosticFields {
 export class Dependence extends Diagnostic implements DependenceFields {
   override readonly kind = "dependence";
   declare readonly dependent: boolean;
+  declare readonly p: number;
   declare readonly decisive: Test | undefined;
   declare readonly acf: readonly CorrelogramPoint[];
   declare readonly pacf: readonly CorrelogramPoint[];
@@ -112,6 +115,7 @@ export function dependence(m: Fitted, options: DependenceOptions = {}): Dependen
     ...about(m),
     tests: [...groups.all, periodogram.test, ...spread.tests],
     dependent: found.dependent,
+    p: found.p,
     decisive: found.decisive,
     acf: Array.from(correlations.r, (r, i) => ({
       ...point(r, i),

@@ -1,4 +1,4 @@
-import { type Remark, Result } from "../data/index.js";
+import { type Remark, Result, type TimeIndex } from "../data/index.js";
 import { record } from "./parts/record.js";
 import type { Fitted } from "./subject.js";
 import type { Test } from "./test.js";
@@ -16,6 +16,19 @@ export interface DiagnosticFields {
   readonly remarks: readonly Remark[];
   readonly specification?: unknown;
   readonly fingerprint?: string;
+  /** The periods used, as cards write them. */
+  readonly span?: string;
+  /** Seed of what was simulated, where something was. */
+  readonly seed?: number;
+  /** Where the rows stand on the time axis, for charts over time; not part of the record. */
+  readonly time?: RowTimes;
+}
+
+/** Where the rows of a regression stand in time. */
+export interface RowTimes {
+  readonly index: Omit<TimeIndex, "ordinals">;
+  /** Per row, in whole steps. */
+  readonly periods: Float64Array;
 }
 
 /** Base of the diagnostic results: immutable, with the fields above and those of its kind. */
@@ -29,6 +42,9 @@ export abstract class Diagnostic extends Result implements DiagnosticFields {
   declare readonly remarks: readonly Remark[];
   declare readonly specification?: unknown;
   declare readonly fingerprint?: string;
+  declare readonly span?: string;
+  declare readonly seed?: number;
+  declare readonly time?: RowTimes;
 
   /** The tests of one name, such as `Ljung–Box`. */
   named(name: string): readonly Test[] {
@@ -36,7 +52,8 @@ export abstract class Diagnostic extends Result implements DiagnosticFields {
   }
 
   override toJSON(): Record<string, unknown> {
-    return record({ ...this }) as Record<string, unknown>;
+    const { time, ...shown } = this;
+    return record(shown) as Record<string, unknown>;
   }
 }
 
@@ -49,6 +66,8 @@ export function about(
     T: m.regression.T,
     k: m.regression.k,
     level: m.level,
+    time: { index: m.design.index, periods: m.regression.periods },
+    ...(m.span === undefined ? {} : { span: m.span }),
     ...(m.specification === undefined ? {} : { specification: m.specification }),
     ...(m.fingerprint === undefined ? {} : { fingerprint: m.fingerprint }),
   };

@@ -4,7 +4,7 @@ import { type PartialResiduals, partialResiduals } from "./form/partial-residual
 import { type QuantilePoint, quantilePlot } from "./form/quantiles.js";
 import { reset, robustReset } from "./form/reset.js";
 import { unitResiduals } from "./parts/residuals.js";
-import { figure, pValue } from "./parts/words.js";
+import { figure, pValue, stated } from "./parts/words.js";
 import type { Fitted } from "./subject.js";
 import type { Test } from "./test.js";
 
@@ -14,6 +14,8 @@ export interface FormOptions {
   readonly powers?: number;
   /** Seed of the simulated Jarque–Bera p-value; default 1. */
   readonly seed?: number;
+  /** Draws of it; default 999. */
+  readonly draws?: number;
 }
 
 interface FormFields extends DiagnosticFields {
@@ -55,7 +57,7 @@ export function form(m: Fitted, options: FormOptions = {}): Form {
   const powers = options.powers ?? 3;
   const robust = robustReset(r, powers);
   const plain = [...new Set([2, powers])].map((highest) => reset(r, highest));
-  const shape = jarqueBera(r, options.seed ?? 1);
+  const shape = jarqueBera(r, options.seed ?? 1, options.draws);
   const decisive = [robust, plain[plain.length - 1]!].find((test) => !Number.isNaN(test.p));
   const bent = decisive !== undefined && decisive.p < 1 - m.level;
   const tails = Number.isNaN(shape.test.p)
@@ -64,10 +66,11 @@ export function form(m: Fitted, options: FormOptions = {}): Form {
   const lead = !decisive
     ? "The shape of the regression cannot be tested with powers of its fitted values"
     : bent
-      ? `Powers of the fitted values still explain ${m.outcome}, so some term enters in the wrong shape: ${decisive.name} ${decisive.distribution} = ${figure(decisive.statistic)}, ${pValue(decisive.p)}`
-      : `No bend found: ${decisive.name} ${decisive.distribution} = ${figure(decisive.statistic)}, ${pValue(decisive.p)}`;
+      ? `Powers of the fitted values still explain ${m.outcome}, so some term enters in the wrong shape: ${decisive.name}, ${stated(decisive)}`
+      : `No bend found: ${decisive.name}, ${stated(decisive)}`;
   return new Form({
     ...about(m),
+    seed: options.seed ?? 1,
     tests: [...plain, robust, shape.test],
     bent,
     decisive,

@@ -5,7 +5,7 @@ import { about, Diagnostic, type DiagnosticFields } from "./diagnostic.js";
 import { holm } from "./parts/holm.js";
 import { unitResiduals } from "./parts/residuals.js";
 import { termAt } from "./parts/term-at.js";
-import { figure, pValue } from "./parts/words.js";
+import { figure, pValue, stated } from "./parts/words.js";
 import { breuschPagan } from "./spread/breusch-pagan.js";
 import { goldfeldQuandt } from "./spread/goldfeld-quandt.js";
 import { type Scale, scaleBy } from "./spread/paths.js";
@@ -25,6 +25,8 @@ export interface SpreadOptions {
 interface SpreadFields extends DiagnosticFields {
   /** Whether the tests that fit the model reject an even spread (Holm, at 1 − level). */
   readonly uneven: boolean;
+  /** Smallest p of those tests after the adjustment; NaN where none could be computed. */
+  readonly p: number;
   readonly decisive: Test | undefined;
   /** Size of the residuals over time, `at` in periods, in the outcome's unit. */
   readonly overTime: readonly Scale[];
@@ -36,6 +38,7 @@ interface SpreadFields extends DiagnosticFields {
 export class Spread extends Diagnostic implements SpreadFields {
   override readonly kind = "spread";
   declare readonly uneven: boolean;
+  declare readonly p: number;
   declare readonly decisive: Test | undefined;
   declare readonly overTime: readonly Scale[];
   declare readonly overFitted: readonly Scale[];
@@ -74,7 +77,8 @@ export function spread(m: Fitted, options: SpreadOptions = {}): Spread {
   const known = family.filter((test) => !Number.isNaN(test.p));
   const adjusted = holm(known.map((test) => test.p));
   const decisive = known.length === 0 ? undefined : known.reduce((a, b) => (b.p < a.p ? b : a));
-  const uneven = adjusted.some((p) => p < 1 - m.level);
+  const p = known.length === 0 ? Number.NaN : Math.min(...adjusted);
+  const uneven = p < 1 - m.level;
   const fitted = r.y.map((y, t) => y - r.residuals[t]!);
   const overTime = scaleBy(r.residuals, r.periods);
   const overFitted = scaleBy(r.residuals, fitted);
@@ -87,6 +91,7 @@ export function spread(m: Fitted, options: SpreadOptions = {}): Spread {
       ...archTests.map(marked),
     ],
     uneven,
+    p,
     decisive,
     overTime,
     overFitted,
@@ -109,7 +114,7 @@ function finding(
   overFitted: readonly Scale[],
 ): string {
   if (!decisive) return "Too few periods to test whether the residuals' size is even.";
-  const test = `${decisive.name}: ${decisive.distribution} = ${figure(decisive.statistic)}, ${pValue(decisive.p)}`;
+  const test = `${decisive.name}: ${stated(decisive)}`;
   if (!uneven) return `No unevenness found in the size of the residuals; ${test}.`;
   const early = half(overTime, 0);
   const late = half(overTime, 1);

@@ -28,8 +28,9 @@ export interface StabilityOptions {
   readonly terms?: readonly string[];
   /** Most breaks looked for; default 5. */
   readonly breaks?: number;
-  /** Draws and seed of the bootstrap; default 499 (199 beyond 2,000 periods) and 1. */
+  /** Draws of the bootstrap, default 499 (199 beyond 2,000 periods), and of the CUSUM of squares, default 999. */
   readonly draws?: number;
+  /** Seed of both; default 1. */
   readonly seed?: number;
 }
 
@@ -107,7 +108,7 @@ export function stability(m: Fitted, options: StabilityOptions = {}): Stability 
   const one = supWald(r, search);
   const pass = recursion(r, r.y);
   const sums = cusum(pass, m.level);
-  const squares = cusumOfSquares(pass, m.level, seed);
+  const squares = cusumOfSquares(pass, m.level, seed, options.draws);
   const several = severalBreaks(r, m.level, options.breaks ?? 5, search, one.robust);
   const decisive = [one.robust, one.plain].find((test) => !Number.isNaN(test.p));
   const unstable = decisive !== undefined && decisive.p < 1 - m.level;
@@ -122,6 +123,7 @@ export function stability(m: Fitted, options: StabilityOptions = {}): Stability 
   const breaks = at.map(labelled);
   return new Stability({
     ...about(m),
+    seed,
     tests: [
       one.plain,
       one.robust,

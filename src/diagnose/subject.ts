@@ -11,6 +11,8 @@ export interface Fitted {
   readonly design: { readonly index: TimeIndex };
   /** Under the covariance estimator that is on; classical standard errors stand in where there is none. */
   readonly coefficients?: readonly { readonly term: string; readonly se: number }[];
+  /** The periods used, as cards write them: `2019-W01 to 2022-W52`. */
+  readonly span?: string;
   readonly specification?: unknown;
   readonly fingerprint?: string;
 }

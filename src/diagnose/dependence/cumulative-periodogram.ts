@@ -1,4 +1,5 @@
-import { kolmogorovUpper, kolmogorovUpperQuantile } from "../laws/kolmogorov.js";
+import { kolmogorovUpper } from "../laws/kolmogorov.js";
+import { kolmogorovPoint } from "../laws/kolmogorov-limit.js";
 import { periodogram } from "../parts/fourier.js";
 import { notComputed } from "../parts/laws.js";
 import { hasGaps } from "../parts/time.js";
@@ -11,7 +12,7 @@ export interface CumulativePeriodogram {
   readonly test: Test;
   /** Cycles per period, at most `points` of them, with the share of variance up to each. */
   readonly path: readonly { readonly frequency: number; readonly share: number }[];
-  /** White noise stays within `frequency`·2 ± this, at the level asked for. */
+  /** White noise stays within `frequency`·2 ± this at the level asked for; by Stephens' (1970) factor, to about 0.001. */
   readonly band: number;
 }
 
@@ -62,5 +63,5 @@ export function cumulativePeriodogram(
   const path: { frequency: number; share: number }[] = [];
   for (let j = 1; j <= n; j++)
     if (j % every === 0 || j === where || j === n) path.push({ frequency: j / T, share: share[j]! });
-  return { test, path, band: kolmogorovUpperQuantile(1 - level, m) };
+  return { test, path, band: kolmogorovPoint(1 - level) / (Math.sqrt(m) + 0.12 + 0.11 / Math.sqrt(m)) };
 }

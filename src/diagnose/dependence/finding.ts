@@ -1,5 +1,5 @@
 import { holm } from "../parts/holm.js";
-import { figure, pValue } from "../parts/words.js";
+import { figure, stated } from "../parts/words.js";
 import type { Test } from "../test.js";
 import type { Inflation } from "./inflation.js";
 
@@ -7,6 +7,8 @@ import type { Inflation } from "./inflation.js";
 export interface Verdict {
   /** Whether some test of the family rejects independence after Holm's adjustment at 1 − level. */
   readonly dependent: boolean;
+  /** Smallest p of the family after Holm's adjustment; NaN where none could be computed. */
+  readonly p: number;
   /** The test the finding rests on: the one with the smallest p of the family. */
   readonly decisive: Test | undefined;
   readonly finding: string;
@@ -25,19 +27,22 @@ export function verdict(
   if (known.length === 0)
     return {
       dependent: false,
+      p: Number.NaN,
       decisive: undefined,
       finding: `Too few degrees of freedom to test for dependence; the correlation of neighbouring residuals is ${figure(correlation, 2)}.`,
     };
   const adjusted = holm(known.map((test) => test.p));
   const strongest = known.reduce((best, test, i) => (test.p < known[best]!.p ? i : best), 0);
   const decisive = known[strongest]!;
-  const dependent = adjusted[strongest]! < 1 - level;
+  const p = adjusted[strongest]!;
+  const dependent = p < 1 - level;
   if (!dependent) {
     const widest = known.reduce((a, b) =>
       (b.lags ?? 0) > (a.lags ?? 0) && !b.note?.includes("alone") ? b : a,
     );
     return {
       dependent,
+      p,
       decisive,
       finding:
         `No dependence found in the residuals: correlation ${figure(correlation, 2)} from one ${period} to the next; ` +
@@ -53,6 +58,7 @@ export function verdict(
       : `Residuals depend on their past within ${decisive.lags} ${period}s`;
   return {
     dependent,
+    p,
     decisive,
     finding: `${lead}; ${wording(decisive)}.${consequence(inflation, interceptAt)}`,
   };
@@ -64,7 +70,7 @@ function wording(test: Test): string {
     : test.lags === 1
       ? "at lag 1"
       : `over lags 1–${test.lags}`;
-  return `${test.name} ${which}: ${test.distribution} = ${figure(test.statistic)}, ${pValue(test.p)}`;
+  return `${test.name} ${which}: ${stated(test)}`;
 }
 
 function consequence(inflation: Inflation, interceptAt: number): string {

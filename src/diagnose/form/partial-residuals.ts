@@ -1,5 +1,6 @@
 import type { Regression } from "../../estimate/index.js";
 import { columnOf } from "../../numeric/index.js";
+import { takesMoreThan } from "../parts/distinct.js";
 
 /** How the outcome moves with one term once the others are taken off. */
 export interface PartialResiduals {
@@ -16,7 +17,7 @@ export function partialResiduals(m: Regression, points = 400): PartialResiduals[
   const result: PartialResiduals[] = [];
   for (let j = 0; j < m.k; j++) {
     const x = columnOf(m.X, j);
-    if (new Set(x).size <= 2) continue;
+    if (!takesMoreThan(2, x)) continue;
     const slope = m.coefficients[j]!;
     const rows = Array.from({ length: m.T }, (_, t) => t).sort((a, b) => x[a]! - x[b]! || a - b);
     const at = (t: number) => ({ x: x[t]!, y: m.residuals[t]! + slope * x[t]! });

@@ -17,7 +17,7 @@ export interface QuantilePoint {
  * i-th of T ordered uniforms, Beta(i, T−i+1). At most `points` of them, evenly spaced in rank, both ends kept. Rows that
  * the terms fit exactly (h = 1) are left out.
  */
-export function quantilePlot(m: Regression, level: number, points = 200): QuantilePoint[] {
+export function quantilePlot(m: Regression, level: number, points = 101): QuantilePoint[] {
   const s = Math.sqrt(m.rss / (m.T - m.k));
   const ordered: number[] = [];
   for (let t = 0; t < m.T; t++) {
@@ -30,12 +30,22 @@ export function quantilePlot(m: Regression, level: number, points = 200): Quanti
   const ranks = Array.from({ length: shown }, (_, i) =>
     shown === 1 ? 1 : 1 + Math.round((i * (n - 1)) / (shown - 1)),
   );
-  const alpha = 1 - level;
+  const tail = (1 - level) / 2;
+  // the band is symmetric: the upper end at rank i is minus the lower one at rank n + 1 − i
+  const lower = new Map<number, number>();
+  const low = (i: number) => {
+    let value = lower.get(i);
+    if (value === undefined) {
+      value = normal.quantile(orderedUniform(tail, i, n));
+      lower.set(i, value);
+    }
+    return value;
+  };
   return ranks.map((i) => ({
     expected: normal.quantile((i - 0.5) / n),
     found: ordered[i - 1]!,
-    low: normal.quantile(orderedUniform(alpha / 2, i, n)),
-    high: normal.quantile(orderedUniform(1 - alpha / 2, i, n)),
+    low: low(i),
+    high: -low(n + 1 - i),
   }));
 }
 

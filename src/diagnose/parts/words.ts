@@ -1,3 +1,5 @@
+import type { Test } from "../test.js";
+
 /** A figure for a sentence: `digits` significant digits, a true minus sign, no exponent in the usual range. */
 export function figure(x: number, digits = 3): string {
   if (!Number.isFinite(x)) return Number.isNaN(x) ? "undefined" : x > 0 ? "∞" : "−∞";
@@ -16,6 +18,15 @@ export function pValue(p: number): string {
   if (Number.isNaN(p)) return "p undefined";
   if (p < 0.001) return "p < 0.001";
   return p > 0.9995 ? "p > 0.999" : `p = ${p.toFixed(3)}`;
+}
+
+/** A test's figures for a sentence: `F(4, 171) = 4.64, p = 0.001`, `statistic 24.5, p = 0.106`. */
+export function stated(test: Pick<Test, "distribution" | "statistic" | "p">): string {
+  const value = figure(test.statistic);
+  const lead = /^(F|χ²|t)\(/.test(test.distribution)
+    ? `${test.distribution} = ${value}`
+    : `statistic ${value}`;
+  return `${lead}, ${pValue(test.p)}`;
 }
 
 /** `1 period`, `3 periods`. */

@@ -1,5 +1,5 @@
 import { counterRandom } from "../../numeric/index.js";
-import { kolmogorovLimitUpper } from "../laws/kolmogorov-limit.js";
+import { kolmogorovLimitUpper, kolmogorovPoint } from "../laws/kolmogorov-limit.js";
 import { notComputed } from "../parts/laws.js";
 import type { CusumPath } from "./cusum.js";
 import type { Recursion } from "./recursion.js";
@@ -32,6 +32,7 @@ export function cusumOfSquares(
   { residuals, rows }: Recursion,
   level: number,
   seed: number,
+  draws = 999,
   points = 300,
 ): CusumPath {
   const name = "CUSUM of squares";
@@ -57,9 +58,9 @@ export function cusumOfSquares(
       statistic,
       df: [n],
       distribution: n > 1000 ? "Brownian bridge" : "simulated, normal errors",
-      p: cusumSquaresUpper(statistic, n, seed),
+      p: cusumSquaresUpper(statistic, n, seed, draws),
       valid: true,
-      ...(n > 1000 ? {} : { note: `999 draws, seed ${seed}` }),
+      ...(n > 1000 ? {} : { note: `${draws} draws, seed ${seed}` }),
     },
     path: [...values.keys()]
       .filter((i) => i % every === 0 || i === furthest || i === n - 1)
@@ -74,12 +75,5 @@ export function cusumOfSquares(
 
 /** Half-width of the band that the path leaves with probability `alpha`, from the Brownian bridge limit and the shift. */
 export function cusumSquaresQuantile(alpha: number, n: number): number {
-  let low = 0;
-  let high = 4;
-  for (let i = 0; i < 60; i++) {
-    const middle = (low + high) / 2;
-    if (kolmogorovLimitUpper(middle) > alpha) low = middle;
-    else high = middle;
-  }
-  return Math.max(0, ((low + high) / 2 - 0.82 / Math.sqrt(n)) / Math.sqrt(n / 2));
+  return Math.max(0, (kolmogorovPoint(alpha) - 0.82 / Math.sqrt(n)) / Math.sqrt(n / 2));
 }

@@ -1,5 +1,5 @@
 import type { Regression } from "../../estimate/index.js";
-import { columnOf, studentT } from "../../numeric/index.js";
+import { columnOf, normal, studentT } from "../../numeric/index.js";
 import { columnLength, recursion } from "./recursion.js";
 
 /** A coefficient as it was estimated from the rows up to one of them. */
@@ -33,7 +33,7 @@ export function recursiveCoefficients(m: Regression, level: number, points = 150
     if (rank < k || n <= k || n < start || ((T - n) % every !== 0 && n !== T)) return;
     const { solution, variances } = solve(R, rhs, k);
     const s = Math.sqrt(rss / (n - k));
-    const t = studentT.upperQuantile((1 - level) / 2, n - k);
+    const t = studentPoint((1 - level) / 2, n - k);
     for (let j = 0; j < k; j++) {
       const estimate = solution[j]! / lengths[j]!;
       const half = (t * s * Math.sqrt(variances[j]!)) / lengths[j]!;
@@ -47,6 +47,20 @@ export function recursiveCoefficients(m: Regression, level: number, points = 150
     }
   });
   return paths;
+}
+
+/** Upper t quantile: exact up to 30 degrees of freedom, beyond by the expansion in 1/df (Cornish and Fisher), six digits. */
+function studentPoint(p: number, df: number): number {
+  if (df <= 30) return studentT.upperQuantile(p, df);
+  const z = normal.upperQuantile(p);
+  const z2 = z * z;
+  return (
+    z *
+    (1 +
+      (z2 + 1) / (4 * df) +
+      ((5 * z2 + 16) * z2 + 3) / (96 * df * df) +
+      (((3 * z2 + 19) * z2 + 17) * z2 - 15) / (384 * df ** 3))
+  );
 }
 
 /** R⁻¹·rhs and the diagonal of (R'R)⁻¹ for an upper triangle, row-major. */

@@ -3,7 +3,6 @@ import { autocorrelations } from "../dependence/correlogram.js";
 import { kolmogorovLimitUpper } from "../laws/kolmogorov-limit.js";
 import { notComputed } from "../parts/laws.js";
 import type { Test } from "../test.js";
-import { dependenceReach } from "./multipliers.js";
 
 /**
  * Cumulated least-squares residuals (Ploberger and Krämer 1992) over √T times their long-run standard deviation, so that
@@ -36,4 +35,11 @@ export function residualCusum(m: Regression, hasConstant: boolean): Test {
     valid: true,
     note: `long-run variance with Bartlett bandwidth ${reach}`,
   };
+}
+
+/** Bartlett bandwidth by Andrews' (1991) AR(1) plug-in on a residual autocorrelation: whole, at least 1, at most T/4. */
+export function dependenceReach(rho: number, T: number): number {
+  const r = Math.max(-0.97, Math.min(0.97, rho));
+  const alpha = (4 * r * r) / ((1 - r) ** 2 * (1 + r) ** 2);
+  return Math.max(1, Math.min(Math.floor(T / 4), Math.round(1.1447142425533319 * (alpha * T) ** (1 / 3))));
 }

@@ -1,12 +1,10 @@
 import type { Regression } from "../../estimate/index.js";
-import { autocorrelations } from "../dependence/correlogram.js";
 import { logOddsRange, supWaldUpper } from "../laws/sup-f.js";
 import { notComputed } from "../parts/laws.js";
-import { basisColumns, residualised } from "../parts/projection.js";
 import type { Test } from "../test.js";
+import { bootstrap } from "./bootstrap.js";
 import { breakingTerms } from "./breaking-terms.js";
-import { dependenceReach, dependentMultipliers } from "./multipliers.js";
-import { type BreakSearch, breakSearch } from "./wald-path.js";
+import { breakSearch } from "./wald-path.js";
 
 /** How a break is searched for. */
 export interface SearchOptions {
@@ -30,8 +28,8 @@ export interface SupWald {
   readonly path: readonly { readonly rowsBefore: number; readonly wald: number }[];
   readonly breaking: readonly number[];
   readonly held: readonly number[];
-  /** Rows over which the bootstrap's multipliers are correlated. */
-  readonly reach: number;
+  /** Order of the autoregression that the bootstrap draws errors from. */
+  readonly order: number;
 }
 
 /** Searches all dates between the trimmed ends for one break in the coefficients. */
@@ -48,7 +46,7 @@ export function supWald(m: Regression, options: SearchOptions = {}): SupWald {
     path: [],
     breaking,
     held,
-    reach: 1,
+    order: 0,
   });
   if (T - 2 * side < 1 || T - k - q < 1)
     return nothing(`${T} periods leave no date with ${side} periods on both sides`);
@@ -73,79 +71,10 @@ export function supWald(m: Regression, options: SearchOptions = {}): SupWald {
     p,
     valid: true,
   };
-  const { robust, reach } = bootstrap(m, search, best, options);
+  const bootstrapped = bootstrap(m, search, best, options);
   const every = Math.max(1, Math.ceil(wald.length / 400));
   const path = [...wald.keys()]
     .filter((i) => i % every === 0 || i === best || i === wald.length - 1)
     .map((i) => ({ rowsBefore: search.dates[i]!, wald: wald[i]! }));
-  return { plain, robust, rowsBefore: search.dates[best]!, path, breaking, held, reach };
-}
-
-/**
- * Hansen's (2000) bootstrap with the terms held fixed: errors of each draw are the residuals of the best break times normal
- * multipliers, which Shao (2010) correlates over as many rows as the residuals' own autocorrelation asks for.
- */
-function bootstrap(m: Regression, full: BreakSearch, best: number, options: SearchOptions) {
-  const name = "sup-Wald, robust";
-  const { T, k } = m;
-  const draws = options.draws ?? (T <= 2000 ? 499 : 199);
-  if (draws === 0) return { robust: notComputed(name, "no draws asked for"), reach: 1 };
-  const dates = [...full.dates];
-  const every = Math.max(1, Math.ceil(dates.length / 300));
-  const grid = dates.filter((_, i) => i % every === 0 || i === best);
-  const search =
-    every === 1
-      ? full
-      : breakSearch(m, breakingTerms(m, dates[0]!, T - dates.at(-1)!, options.candidates).breaking, grid);
-  const largest = (e: Float64Array) => {
-    const total = e.reduce((sum, x) => sum + x * x, 0);
-    return search
-      .reductions(e)
-      .reduce((most, drop) => Math.max(most, (drop / (total - drop)) * (T - k - search.q)), 0);
-  };
-  const found = largest(m.residuals);
-  const errors = withoutBreak(m, dates[best]!);
-  const { r } = autocorrelations(errors, m.periods, 1);
-  const reach = dependenceReach(r[0]!, T);
-  const basis = basisColumns(m.Q);
-  const u = new Float64Array(T);
-  let larger = 0;
-  for (let draw = 0; draw < draws; draw++) {
-    dependentMultipliers(options.seed ?? 1, draw, reach, u);
-    for (let t = 0; t < T; t++) u[t]! *= errors[t]!;
-    projectOnce(u, basis);
-    if (largest(u) >= found) larger++;
-  }
-  const robust: Test = {
-    name,
-    statistic: found,
-    df: [search.q],
-    distribution: "wild bootstrap, terms fixed",
-    p: (1 + larger) / (1 + draws),
-    valid: true,
-    note: `${draws} draws, seed ${options.seed ?? 1}, multipliers correlated over ${reach} ${reach === 1 ? "row" : "rows"}`,
-  };
-  return { robust, reach };
-}
-
-function projectOnce(u: Float64Array, basis: readonly Float64Array[]): void {
-  for (const q of basis) {
-    let weight = 0;
-    for (let t = 0; t < u.length; t++) weight += q[t]! * u[t]!;
-    for (let t = 0; t < u.length; t++) u[t]! -= weight * q[t]!;
-  }
-}
-
-/** Residuals of the terms fitted separately before and after the break. */
-function withoutBreak(m: Regression, rowsBefore: number): Float64Array {
-  const basis: Float64Array[] = [];
-  const columns = basisColumns(m.Q);
-  for (const after of [false, true])
-    for (const q of columns) {
-      const part = q.map((x, t) => (t >= rowsBefore === after ? x : 0));
-      const rest = residualised(part, basis);
-      const length = Math.sqrt(rest.reduce((sum, x) => sum + x * x, 0));
-      if (length > 1e-8) basis.push(rest.map((x) => x / length));
-    }
-  return residualised(m.residuals, basis);
+  return { plain, ...bootstrapped, rowsBefore: search.dates[best]!, path, breaking, held };
 }

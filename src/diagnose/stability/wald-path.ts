@@ -10,6 +10,10 @@ export interface BreakSearch {
   readonly q: number;
   /** Drop in the residual sum of squares that a break after each date brings, for residuals e orthogonal to the terms. */
   reductions(e: Float64Array): Float64Array;
+  /** What is left of such residuals once the terms may break at the `at`-th of the dates. */
+  withBreak(e: Float64Array, at: number): Float64Array;
+  /** The same search over about `most` evenly spaced dates, the `keep`-th among them. */
+  thinned(most: number, keep: number): BreakSearch;
 }
 
 /**
@@ -40,7 +44,17 @@ export function breakSearch(
     const factor = factored(A, C, q, k);
     if (factor) factors.set(t, factor);
   }
-  const kept = Int32Array.from([...factors.keys()].sort((a, b) => a - b));
+  return over(Int32Array.from([...factors.keys()].sort((a, b) => a - b)), factors, B, Q);
+}
+
+function over(
+  kept: Int32Array,
+  factors: ReadonlyMap<number, Float64Array>,
+  B: readonly Float64Array[],
+  Q: readonly Float64Array[],
+): BreakSearch {
+  const q = B.length;
+  const T = B[0]!.length;
   return {
     dates: kept,
     q,
@@ -63,7 +77,45 @@ export function breakSearch(
       }
       return result;
     },
+    withBreak(e, at) {
+      const date = kept[at]!;
+      const L = factors.get(date)!;
+      const delta = new Float64Array(q);
+      for (let i = 0; i < q; i++) for (let t = date; t < T; t++) delta[i]! += B[i]![t]! * e[t]!;
+      for (let i = 0; i < q; i++) {
+        for (let j = 0; j < i; j++) delta[i]! -= L[i * q + j]! * delta[j]!;
+        delta[i]! /= L[i * q + i]!;
+      }
+      for (let i = q - 1; i >= 0; i--) {
+        for (let j = i + 1; j < q; j++) delta[i]! -= L[j * q + i]! * delta[j]!;
+        delta[i]! /= L[i * q + i]!;
+      }
+      const rest = Float64Array.from(e);
+      for (let t = date; t < T; t++) for (let i = 0; i < q; i++) rest[t]! -= delta[i]! * B[i]![t]!;
+      projectOut(rest, Q);
+      return rest;
+    },
+    thinned(most, keep) {
+      const every = Math.max(1, Math.ceil(kept.length / most));
+      return every === 1
+        ? this
+        : over(
+            kept.filter((_, i) => i % every === 0 || i === keep),
+            factors,
+            B,
+            Q,
+          );
+    },
   };
+}
+
+/** Takes the projection on orthonormal columns off, in place. */
+export function projectOut(v: Float64Array, basis: readonly Float64Array[]): void {
+  for (const q of basis) {
+    let weight = 0;
+    for (let t = 0; t < v.length; t++) weight += q[t]! * v[t]!;
+    for (let t = 0; t < v.length; t++) v[t]! -= weight * q[t]!;
+  }
 }
 
 /** Lower triangle of A − C'C, or nothing where it is singular. */

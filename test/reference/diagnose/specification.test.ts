@@ -162,7 +162,7 @@ for (const name of ["seatbelts", "longley"]) {
   });
 
   test(`base R, ${name}: quantile plot and its band`, () => {
-    quantilePlot(m, 0.95).forEach((point, i) => {
+    quantilePlot(m, 0.95, 1000).forEach((point, i) => {
       assert.ok(Math.abs(point.found - c.ordered[i]!) < 10 ** -digits, `ordered ${i}`);
       agree(point.low, c.quantileLow[i]!, 8, `low ${i}`);
       agree(point.high, c.quantileHigh[i]!, 8, `high ${i}`);

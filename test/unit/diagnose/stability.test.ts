@@ -1,6 +1,8 @@
 import assert from "node:assert/strict";
 import { test } from "node:test";
-import { dependenceReach, dependentMultipliers } from "../../../src/diagnose/stability/multipliers.js";
+import { autocorrelations } from "../../../src/diagnose/dependence/correlogram.js";
+import { autoregression, drawErrors, innovationsOf } from "../../../src/diagnose/stability/error-process.js";
+import { dependenceReach } from "../../../src/diagnose/stability/residual-cusum.js";
 import { supWald } from "../../../src/diagnose/stability/sup-wald.js";
 import { stability } from "../../../src/diagnose/stability.js";
 import { InputError } from "../../../src/numeric/index.js";
@@ -95,23 +97,25 @@ test("edges: few periods, a perfect fit, gaps", () => {
   assert.ok(gaps.path.every((p) => periods.includes(p.at)));
 });
 
-test("multipliers: unit variance, triangular autocorrelation, the same bits again", () => {
-  const T = 200_000;
-  const z = dependentMultipliers(3, 1, 5, new Float64Array(T));
-  for (const [lag, want] of [
-    [0, 1],
-    [2, 0.6],
-    [4, 0.2],
-    [5, 0],
-  ] as const) {
-    let sum = 0;
-    for (let t = lag; t < T; t++) sum += z[t]! * z[t - lag]!;
-    assert.ok(Math.abs(sum / T - want) < 0.02, `lag ${lag}: ${sum / T}`);
-  }
-  assert.deepEqual(
-    dependentMultipliers(3, 1, 5, new Float64Array(50)),
-    dependentMultipliers(3, 1, 5, new Float64Array(50)),
-  );
+test("drawn errors have the autoregression asked for, are filtered back to their innovations, and come out the same again", () => {
+  const phi = autoregression(Float64Array.of(0.7, 0.4));
+  // Yule–Walker by hand: φ₂ = (r₂ − r₁²)/(1 − r₁²), φ₁ = r₁(1 − φ₂)
+  const second = (0.4 - 0.49) / (1 - 0.49);
+  assert.ok(Math.abs(phi[1]! - second) < 1e-12 && Math.abs(phi[0]! - 0.7 * (1 - second)) < 1e-12);
+  const T = 100_000;
+  const u = drawErrors(phi, 3, 1, new Float64Array(T));
+  const r = autocorrelations(
+    u,
+    u.map((_, t) => t),
+    2,
+  ).r;
+  assert.ok(Math.abs(r[0]! - 0.7) < 0.01 && Math.abs(r[1]! - 0.4) < 0.015, String(r));
+  const v = innovationsOf(u, phi);
+  assert.ok(Math.abs(v.reduce((sum, x) => sum + x * x, 0) / T - 1) < 0.02);
+  assert.deepEqual(drawErrors(phi, 3, 1, new Float64Array(50)), drawErrors(phi, 3, 1, new Float64Array(50)));
+  // autocorrelations of no stationary process are drawn in
+  const wild = autoregression(Float64Array.of(1.2, -2));
+  assert.ok(drawErrors(wild, 1, 1, new Float64Array(2000)).every(Number.isFinite));
   assert.equal(dependenceReach(0, 200), 1);
   assert.ok(dependenceReach(0.8, 200) > 5 && dependenceReach(1, 200) <= 50);
 });
@@ -131,4 +135,19 @@ test("size of the largest Wald statistic at 5 %: the limit law with its grid cor
   // 5.6 % in a simulation made elsewhere for this design
   assert.ok(plain / 500 > 0.02 && plain / 500 < 0.09, String(plain / 500));
   assert.ok(robust / robustDraws < 0.14, String(robust / robustDraws));
+});
+
+test("under AR(0.5) errors the plain law rejects in two of five sound fits, the robust form in about one of twelve (100 draws, MC error 3 points)", () => {
+  const T = 100;
+  let plain = 0;
+  let robust = 0;
+  for (let i = 0; i < 100; i++) {
+    const e = noise(T + 50, 400 + i);
+    for (let t = 1; t < e.length; t++) e[t]! += 0.5 * e[t - 1]!;
+    const found = supWald(regression(e.slice(50), [ones(T), noise(T, 600 + i)]), { draws: 99 });
+    if (found.plain.p <= 0.05) plain++;
+    if (found.robust.p <= 0.05) robust++;
+  }
+  assert.ok(plain > 25, `plain ${plain}`);
+  assert.ok(robust < 18, `robust ${robust}`);
 });

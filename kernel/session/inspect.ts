@@ -19,7 +19,9 @@ export function inspectAt(
     if (at < 0 || at > code.length) continue;
     const info = compiler.inspect(declarations, code, at);
     if (!info) continue;
-    const signature = (info.displayParts ?? []).map(({ text }) => text).join("");
+    // An imported name is told as such; cells have the cell functions without an import of their own.
+    const told = (info.displayParts ?? []).map(({ text }) => text).join("");
+    const signature = told.replace(/^\(alias\) /, "").replace(/\nimport .*$/, "");
     const documentation = (info.documentation ?? []).map(({ text }) => text).join("");
     const tags = (info.tags ?? []).map(
       (tag) => `@${tag.name} ${(tag.text ?? []).map(({ text }) => text).join("")}`,

@@ -26,6 +26,7 @@ export {
   first,
   last,
   load,
+  look,
   max,
   mean,
   min,

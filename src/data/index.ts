@@ -9,6 +9,9 @@ export {
 export { findingsOf, gapsOf, missingStretches, type Stretch } from "./findings.js";
 export { type LoadSource, load } from "./load/load.js";
 export type { LoadOptions } from "./load/options.js";
+export type { LagCorrelation } from "./look/correlation.js";
+export type { Bin } from "./look/thin.js";
+export { Look, type LookParts, type LookSeries, look } from "./look.js";
 export { nearestName, suggestion } from "./nearest.js";
 export { type Progress, reportProgress, showProgressIn } from "./progress.js";
 export { requireRegular } from "./regular.js";

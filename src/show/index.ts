@@ -1,7 +1,14 @@
 // The door of this room. Loading it says how every kind of result is shown.
 import { showCharts } from "./presenters/chart.js";
+import { checkupShowing } from "./presenters/checkup.js";
+import { cointegrationShowing } from "./presenters/cointegration.js";
 import { dependenceShowing } from "./presenters/dependence.js";
 import { fitShowing } from "./presenters/fit.js";
+import { formShowing } from "./presenters/form.js";
+import { integrationShowing } from "./presenters/integration.js";
+import { leverageShowing } from "./presenters/leverage.js";
+import { spreadShowing } from "./presenters/spread.js";
+import { stabilityShowing } from "./presenters/stability.js";
 import { tableShowing } from "./presenters/table.js";
 import { timeTableShowing } from "./presenters/time-table.js";
 import { show } from "./showing.js";
@@ -11,6 +18,13 @@ show("table", tableShowing);
 show("time-table", timeTableShowing);
 show("fit", fitShowing);
 show("dependence", dependenceShowing);
+show("checkup", checkupShowing);
+show("cointegration", cointegrationShowing);
+show("integration", integrationShowing);
+show("stability", stabilityShowing);
+show("leverage", leverageShowing);
+show("form", formShowing);
+show("spread", spreadShowing);
 
 export { Chart } from "./chart/chart.js";
 export { vegaLiteType } from "./chart/spec.js";

@@ -3,6 +3,7 @@ import { recordOf, recordType } from "../record.js";
 import type { TableModel } from "../table/model.js";
 import { plainTable } from "../table/plain.js";
 import { type Html, html } from "../text/html.js";
+import { legible, name } from "../text/legible.js";
 import { padEnd, width, wrap } from "../text/width.js";
 import { lagbookVersion } from "../version.js";
 
@@ -49,7 +50,7 @@ export function bundle(result: Result, card: Card): MimeBundle {
 export function htmlCard(card: Card): Html {
   const { finding, remarks = [], parts } = card;
   const small = "font-size:0.85em;opacity:0.8";
-  return html`<div class="lagbook mathjax_ignore tex2jax_ignore" style="max-width:64em;margin:0.3em 0;padding:0.5em 0 0.4em 0.9em;border-left:3px solid rgba(0,114,178,0.75);text-align:left;line-height:1.45;overflow-wrap:break-word;page-break-inside:avoid"><div style="margin:0 0 0.3em 0"><strong>${card.subject}</strong>${card.headline.map(
+  return html`<div class="lagbook mathjax_ignore tex2jax_ignore" style="max-width:64em;margin:0.3em 0;padding:0.5em 0 0.4em 0.9em;border-left:3px solid rgba(0,114,178,0.75);text-align:left;line-height:1.45;overflow-wrap:break-word;page-break-inside:avoid"><div style="margin:0 0 0.3em 0"><strong>${name(card.subject)}</strong>${card.headline.map(
     (fact) => html`<span style="opacity:0.8"> · ${fact}</span>`,
   )}</div>${
     finding !== undefined && html`<div style="margin:0 0 0.5em 0;font-size:1.1em">${finding}</div>`
@@ -86,9 +87,11 @@ function footer({ fingerprint }: Card): string[] {
 /** A card as plain text: everything that the HTML says, folded parts included. */
 export function plainCard(card: Card): string {
   const blocks = [
-    [card.subject, ...card.headline].join(" · "),
-    ...(card.finding === undefined ? [] : [wrap(card.finding)]),
-    ...(card.remarks ?? []).map(({ severity: kind, text }) => wrap(`${severity[kind]}: ${text}`, 96, "  ")),
+    [name(card.subject), ...card.headline.map(legible)].join(" · "),
+    ...(card.finding === undefined ? [] : [wrap(legible(card.finding))]),
+    ...(card.remarks ?? []).map(({ severity: kind, text }) =>
+      wrap(`${severity[kind]}: ${legible(text)}`, 96, "  "),
+    ),
     ...card.parts
       .filter((part) => part.plain !== "")
       .map((part) => (part.folded === undefined ? part.plain : `${part.folded}\n${part.plain}`)),
@@ -104,14 +107,16 @@ export function tablePart(table: TableModel, markup: Html, folded?: string): Par
 
 /** A part that lists facts, each with its label. */
 export function factsPart(facts: readonly Fact[], folded?: string): Part {
-  const labels = facts.reduce((most, [label]) => Math.max(most, width(label)), 0);
+  const labels = facts.reduce((most, [label]) => Math.max(most, width(legible(label))), 0);
   const cells = facts.map(
     ([label, text]) =>
       html`<div style="opacity:0.8">${label}:</div><div style="overflow-wrap:break-word">${text}</div>`,
   );
   return {
     html: html`<div style="display:grid;grid-template-columns:max-content 1fr;column-gap:0.9em">${cells}</div>`,
-    plain: facts.map(([label, text]) => `${padEnd(`${label}:`, labels + 1)} ${text}`).join("\n"),
+    plain: facts
+      .map(([label, text]) => `${padEnd(`${legible(label)}:`, labels + 1)} ${legible(text)}`)
+      .join("\n"),
     ...(folded === undefined ? {} : { folded }),
   };
 }

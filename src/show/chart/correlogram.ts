@@ -29,6 +29,7 @@ function panel(points: readonly Point[], title: string, domain: readonly number[
     axis: { tickMinStep: 1, grid: false, format: "d" },
   };
   const y = (field: string) => ({ field, type: "quantitative", title, scale: { domain } });
+  const dense = points.length > 40;
   const robust = points.some((point) => point.uneven !== undefined);
   const dashed = (field: string) => ({
     mark: { type: "line", color: colours.vermillion, strokeWidth: 1.2, strokeDash: dashes[1] },
@@ -46,11 +47,11 @@ function panel(points: readonly Point[], title: string, domain: readonly number[
       ...(robust ? [dashed("u"), dashed("w")] : []),
       { mark: { type: "rule", color: lineGrey }, encoding: { y: { datum: 0, type: "quantitative" } } },
       {
-        mark: { type: "rule", color: colours.blue, strokeWidth: 2 },
+        mark: { type: "rule", color: colours.blue, strokeWidth: dense ? 1.2 : 2 },
         encoding: { x, y: y("v"), y2: { datum: 0 } },
       },
       {
-        mark: { type: "point", color: colours.blue, size: 40, strokeWidth: 1.5 },
+        mark: { type: "point", color: colours.blue, size: dense ? 12 : 40, strokeWidth: dense ? 1 : 1.5 },
         encoding: {
           x,
           y: y("v"),

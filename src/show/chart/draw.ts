@@ -1,4 +1,5 @@
 import type { TopLevelSpec } from "vega-lite";
+import { textWidth } from "./text-metrics.js";
 
 // Vega and Vega-Lite take 0.7 s to load: at the first chart, not at the start of the kernel.
 let loading: Promise<readonly [typeof import("vega"), typeof import("vega-lite")]> | undefined;
@@ -21,10 +22,29 @@ async function draw(spec: TopLevelSpec): Promise<string> {
   const refuse = () => Promise.reject(new Error("a chart loads nothing"));
   Object.assign(loader, { load: refuse, sanitize: refuse, http: refuse, file: refuse });
   vega.resetSVGDefIds();
+  const { textMetrics } = vega as unknown as { textMetrics: TextMetrics };
+  const estimate = textMetrics.width;
+  textMetrics.width = (item, text) => measured(item, text);
   const view = new vega.View(vega.parse(compiled.spec), { renderer: "none", logger, loader });
   try {
     return await view.toSVG();
   } finally {
     view.finalize();
+    textMetrics.width = estimate;
   }
+}
+
+interface TextItem {
+  readonly fontSize?: number;
+  readonly limit?: number;
+}
+
+// What is used of Vega's text measures, which its types leave out.
+interface TextMetrics {
+  width: (item: TextItem, text: string | undefined) => number;
+}
+
+function measured(item: TextItem, text: string | undefined): number {
+  const whole = textWidth(String(text ?? ""), item.fontSize ?? 11);
+  return item.limit ? Math.min(item.limit, whole) : whole;
 }

@@ -6,5 +6,5 @@ import { type Html, html } from "../text/html.js";
  */
 export function image(svg: string, description: string, style = ""): Html {
   const address = `data:image/svg+xml;base64,${Buffer.from(svg, "utf8").toString("base64")}`;
-  return html`<img src="${address}" alt="${description}" style="max-width:100%;height:auto;${style}">`;
+  return html`<img src="${address}" alt="${description}" style="max-width:100%;height:auto;vertical-align:top;${style}">`;
 }

@@ -44,6 +44,15 @@ const config = {
     titleLimit: 400,
     labelLimit: 180,
   },
+  // What is drawn upwards is said above the axis, where it reads without a turned head.
+  axisY: {
+    titleAngle: 0,
+    titleAlign: "left",
+    titleAnchor: "start",
+    titleBaseline: "bottom",
+    titleX: -30,
+    titleY: -8,
+  },
   legend: {
     labelColor: textGrey,
     titleColor: textGrey,

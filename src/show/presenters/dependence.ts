@@ -5,14 +5,16 @@ import { chartPart } from "../chart/part.js";
 import type { Showing } from "../showing.js";
 import { htmlTable } from "../table/html.js";
 import { counted, figure, statistic, type TableModel, words } from "../table/model.js";
-import { count, levelText } from "../text/figures.js";
+import { levelText } from "../text/figures.js";
+import { name } from "../text/legible.js";
+import { diagnosticCard } from "./diagnostic.js";
 import { testsPart, testsTable } from "./tests.js";
 
 function correlations(m: Dependence): TableModel {
   const group = `${levelText(m.level)} band without dependence`;
   const scale = { decimals: 3, exponent: 0 };
   return {
-    title: `Autocorrelations of the residuals of ${m.outcome}`,
+    title: `Autocorrelations of the residuals of ${name(m.outcome)}`,
     columns: [
       { key: "lag", title: "Lag", align: "right" },
       { key: "acf", title: "Autocorrelation", align: "decimal" },
@@ -45,29 +47,24 @@ function folded(table: TableModel, title: string): Part[] {
   return table.rows.length === 0 ? [] : [tablePart(table, htmlTable(table), title)];
 }
 
+// The tests that the finding may rest on, and those that most readers look for; the rest are folded away.
+const leading = ["Breusch–Godfrey F", "Robust LM", "Durbin–Watson", "Ljung–Box"];
+
+const title = (m: Dependence) => `Tests of independence of the residuals of ${name(m.outcome)}`;
+
 /** Whether the past still shows in the residuals: tests, correlograms, and what it does to the variances. */
 export const dependenceShowing: Showing<Dependence> = {
-  card: async (m) => ({
-    subject: m.outcome,
-    headline: [
-      "dependence of the residuals on their past",
-      `${count(m.T)} periods`,
-      `${count(m.k)} coefficients`,
-    ],
-    finding: m.finding,
-    remarks: m.remarks,
-    parts: [
+  card: async (m) => {
+    const first = m.tests.filter((test) => leading.includes(test.name) || test === m.decisive);
+    const others = m.tests.filter((test) => !first.includes(test));
+    return diagnosticCard(m, "dependence of the residuals on their past", [
       await chartPart(correlogramChart(m)),
-      testsPart(`Tests of independence of the residuals of ${m.outcome}`, m.tests),
+      testsPart(title(m), first.length > 0 ? first : m.tests),
+      ...(first.length > 0 && others.length > 0 ? [testsPart(title(m), others, "Other tests")] : []),
       ...folded(correlations(m), "Autocorrelations lag by lag"),
       ...folded(inflation(m), "What the dependence does to the variance of each coefficient"),
-    ],
-    ...(m.fingerprint === undefined ? {} : { fingerprint: m.fingerprint }),
-  }),
-  tables: {
-    tests: (m) => testsTable(`Tests of independence of the residuals of ${m.outcome}`, m.tests),
-    correlations,
-    inflation,
+    ]);
   },
+  tables: { tests: (m) => testsTable(title(m), m.tests), correlations, inflation },
   charts: { correlogram: correlogramChart, "by lag": byLagChart, periodogram: periodogramChart },
 };

@@ -45,7 +45,15 @@ export function htmlTable(table: TableModel, options: HtmlTableOptions = {}): Ht
   const two = runs.some((run) => run.title !== undefined && run.columns.some((c) => c.title !== ""));
   const over: Html[] = [];
   let position = 0;
-  const drawnHead = drawn && header(drawn.head, "left", 1, two ? 2 : 1, `min-width:${drawn.width};width:${drawn.stretch === false ? drawn.width : "40%"}`);
+  const drawnHead =
+    drawn &&
+    header(
+      drawn.head,
+      "left",
+      1,
+      two ? 2 : 1,
+      `min-width:${drawn.width};width:${drawn.stretch === false ? drawn.width : "40%"}`,
+    );
   for (const run of runs) {
     if (position === at && drawnHead) over.push(drawnHead);
     const alone = run.title === undefined;

@@ -28,6 +28,8 @@ interface SpreadFields extends DiagnosticFields {
   /** Smallest p of those tests after the adjustment; NaN where none could be computed. */
   readonly p: number;
   readonly decisive: Test | undefined;
+  /** Whether the residuals depend on their past, so that `decisive` is of the form robust to that. */
+  readonly dependent: boolean;
   /** Size of the residuals over time, `at` in periods, in the outcome's unit. */
   readonly overTime: readonly Scale[];
   /** Size of the residuals over the fitted values. */
@@ -40,6 +42,7 @@ export class Spread extends Diagnostic implements SpreadFields {
   declare readonly uneven: boolean;
   declare readonly p: number;
   declare readonly decisive: Test | undefined;
+  declare readonly dependent: boolean;
   declare readonly overTime: readonly Scale[];
   declare readonly overFitted: readonly Scale[];
 
@@ -93,6 +96,7 @@ export function spread(m: Fitted, options: SpreadOptions = {}): Spread {
     uneven,
     p,
     decisive,
+    dependent,
     overTime,
     overFitted,
     finding: finding(uneven, decisive, overTime, overFitted),

@@ -9,6 +9,8 @@ export interface Fitted {
   /** Confidence level of intervals and bands. */
   readonly level: number;
   readonly design: { readonly index: TimeIndex };
+  /** The table that was fitted: tells which labels are names of columns. */
+  readonly table?: { has(name: string): boolean };
   /** Under the covariance estimator that is on; classical standard errors stand in where there is none. */
   readonly coefficients?: readonly { readonly term: string; readonly se: number }[];
   /** The periods used, as cards write them: `2019-W01 to 2022-W52`. */

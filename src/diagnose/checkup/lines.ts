@@ -7,6 +7,7 @@ import type { Spread } from "../spread.js";
 import type { Spurious } from "../spurious.js";
 import type { Stability } from "../stability.js";
 import type { Fitted } from "../subject.js";
+import { fitCall, outcomeCode } from "./code.js";
 
 /** One question of a checkup. */
 export interface CheckupLine {
@@ -31,8 +32,6 @@ export interface Subject {
   readonly at: number;
 }
 
-const call = (m: Fitted, options: string) => `fit(table, ${JSON.stringify(m.outcome)}, terms, ${options})`;
-
 export function dependenceLine({ m, term }: Subject, found: Dependence): CheckupLine {
   const inflation = found.inflation.factors.find((f) => f.term === term)?.factor;
   const matters = m.regression.laggedOutcome
@@ -54,8 +53,8 @@ export function dependenceLine({ m, term }: Subject, found: Dependence): Checkup
     ...(found.dependent
       ? {
           attempt: m.regression.laggedOutcome
-            ? `fit(table, ${JSON.stringify(m.outcome)}, [...terms, lag(${JSON.stringify(m.outcome)}, ${next})])`
-            : call(m, `{ errors: ar(${order}) }`),
+            ? fitCall(m, [`lag(${outcomeCode(m)}, ${next})`])
+            : fitCall(m, [], `{ errors: ar(${order}) }`),
         }
       : {}),
   };
@@ -72,7 +71,7 @@ export function spreadLine({ m, term, at }: Subject, found: Spread): CheckupLine
     figure: found.decisive ? `${found.decisive.name} ${pValue(found.p)}` : "not tested",
     p: found.p,
     matters: `standard error of ${term} ${figure(robust / classical, 2)} times that under an even spread`,
-    ...(found.uneven ? { attempt: 'm.under(white("HC3"))' } : {}),
+    ...(found.uneven ? { attempt: found.dependent ? "m.under(neweyWest())" : 'm.under(white("HC3"))' } : {}),
   };
 }
 
@@ -109,7 +108,7 @@ export function stabilityLine({ m, term, at }: Subject, found: Stability): Check
         : `no change of ${term} to report`,
     ...(found.unstable && date
       ? {
-          attempt: `fit(table, ${JSON.stringify(m.outcome)}, [...terms, step(${JSON.stringify(date)})])`,
+          attempt: fitCall(m, [`step(${JSON.stringify(date)})`]),
         }
       : {}),
   };
@@ -152,6 +151,6 @@ export function integrationLine({ m, term }: Subject, alarm: Spurious | undefine
     matters: alarm
       ? `${term} and its interval may mean nothing`
       : `no reason to doubt ${term} on this ground`,
-    ...(alarm ? { attempt: `integration(table, ${JSON.stringify(m.outcome)})` } : {}),
+    ...(alarm ? { attempt: `integration(table, ${outcomeCode(m)})` } : {}),
   };
 }

@@ -76,11 +76,14 @@ function wording(test: Test): string {
 function consequence(inflation: Inflation, interceptAt: number): string {
   const slopes = inflation.factors.filter((_, j) => j !== interceptAt);
   if (inflation.order === 0 || slopes.length === 0) return "";
-  const furthest = slopes.reduce((a, b) =>
-    Math.abs(Math.log(b.factor)) > Math.abs(Math.log(a.factor)) ? b : a,
-  );
-  return (
-    ` An AR(${inflation.order}) in the residuals makes the variance of ${furthest.term} ` +
-    `${figure(furthest.factor, 2)} times what independent errors would give.`
-  );
+  const ordered = [...slopes].sort((a, b) => a.factor - b.factor);
+  const least = ordered[0]!;
+  const most = ordered[ordered.length - 1]!;
+  const size = (one: typeof least) => `${figure(one.factor, 2)} (${one.term})`;
+  const range =
+    least === most
+      ? `the variance of ${most.term} by ${figure(most.factor, 2)}`
+      : `by ${size(least)} to ${size(most)}`;
+  const what = least === most ? "multiplies" : "multiplies the variances of the coefficients";
+  return ` An AR(${inflation.order}) in the residuals ${what} ${range} against independent errors.`;
 }

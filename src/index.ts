@@ -2,6 +2,7 @@
 import { neweyWest } from "./covariance/index.js";
 import type { TimeTable } from "./data/index.js";
 import type { TermLike } from "./design/index.js";
+import { spuriousAlarm } from "./diagnose/index.js";
 import { estimate, type Fit, type FitOptions } from "./estimate/index.js";
 
 /**
@@ -17,7 +18,9 @@ export function fit(
   terms: TermLike | readonly TermLike[],
   options: FitOptions = {},
 ): Fit {
-  return estimate(table, outcome, terms, options, neweyWest());
+  return estimate(table, outcome, terms, options, neweyWest(), [
+    (regression) => spuriousAlarm(regression)?.remark,
+  ]);
 }
 
 export * from "./covariance/index.js";

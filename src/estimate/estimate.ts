@@ -2,7 +2,7 @@ import type { TimeTable } from "../data/index.js";
 import { type DesignOptions, design, type TermLike } from "../design/index.js";
 import type { CovarianceEstimator } from "./covariance-estimator.js";
 import { type ErrorModel, requireErrorModel } from "./errors.js";
-import { Fit, requireLevel } from "./fit.js";
+import { Fit, type FitParts, requireLevel } from "./fit.js";
 import { regress } from "./regress.js";
 
 /** Options of `fit`. */
@@ -22,11 +22,19 @@ export function estimate(
   terms: TermLike | readonly TermLike[],
   options: FitOptions,
   estimator: CovarianceEstimator,
+  watch: NonNullable<FitParts["watch"]> = [],
 ): Fit {
   const level = options.level ?? 0.95;
   requireLevel(level);
   requireErrorModel(options.errors);
   const made = design(table, outcome, terms, options);
   const regression = regress(made);
-  return new Fit({ table, design: made, regression, estimator: options.covariance ?? estimator, level });
+  return new Fit({
+    table,
+    design: made,
+    regression,
+    estimator: options.covariance ?? estimator,
+    level,
+    watch,
+  });
 }

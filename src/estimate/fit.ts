@@ -33,6 +33,8 @@ export interface FitParts {
   readonly regression: LeastSquaresFit;
   readonly estimator: CovarianceEstimator;
   readonly level: number;
+  /** Rooms above this one may have something to remark on a regression; asked when the remarks are first read. */
+  readonly watch?: readonly ((regression: LeastSquaresFit) => Remark | undefined)[];
 }
 
 /**
@@ -47,6 +49,8 @@ export class Fit extends Result {
   readonly estimator: CovarianceEstimator;
   /** Level of the intervals, such as 0.95. */
   readonly level: number;
+  readonly #watch: NonNullable<FitParts["watch"]>;
+  #watched: readonly Remark[] | undefined;
   #covariance: Covariance | undefined;
   #coefficients: readonly Coefficient[] | undefined;
 
@@ -57,6 +61,7 @@ export class Fit extends Result {
     this.regression = parts.regression;
     this.estimator = parts.estimator;
     this.level = parts.level;
+    this.#watch = parts.watch ?? [];
   }
 
   get outcome(): string {
@@ -191,7 +196,10 @@ export class Fit extends Result {
         severity: "caution",
         text: "the fit is perfect to rounding: standard errors, intervals and tests of the residuals mean nothing",
       });
-    } else remarks.push(...this.covariance.remarks);
+    } else {
+      this.#watched ??= this.#watch.flatMap((look) => look(this.regression) ?? []);
+      remarks.push(...this.covariance.remarks, ...this.#watched);
+    }
     if (this.regression.condition > 1e7) {
       remarks.push({
         severity: "caution",
@@ -243,7 +251,7 @@ export class Fit extends Result {
 
   #parts(): FitParts {
     const { table, design, regression, estimator, level } = this;
-    return { table, design, regression, estimator, level };
+    return { table, design, regression, estimator, level, watch: this.#watch };
   }
 
   #estimatorFacts(): Record<string, unknown> {

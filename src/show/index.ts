@@ -1,12 +1,18 @@
 // The door of this room. Loading it says how every kind of result is shown.
+
+import { bandwidthPathShowing } from "./presenters/bandwidth-path.js";
 import { showCharts } from "./presenters/chart.js";
 import { checkupShowing } from "./presenters/checkup.js";
 import { cointegrationShowing } from "./presenters/cointegration.js";
+import { combinationShowing } from "./presenters/combination.js";
+import { covariancesShowing } from "./presenters/covariances.js";
 import { dependenceShowing } from "./presenters/dependence.js";
 import { fitShowing } from "./presenters/fit.js";
 import { formShowing } from "./presenters/form.js";
 import { integrationShowing } from "./presenters/integration.js";
+import { jointTestShowing } from "./presenters/joint-test.js";
 import { leverageShowing } from "./presenters/leverage.js";
+import { lookShowing } from "./presenters/look.js";
 import { spreadShowing } from "./presenters/spread.js";
 import { stabilityShowing } from "./presenters/stability.js";
 import { tableShowing } from "./presenters/table.js";
@@ -17,6 +23,11 @@ showCharts();
 show("table", tableShowing);
 show("time-table", timeTableShowing);
 show("fit", fitShowing);
+show("look", lookShowing);
+show("covariances", covariancesShowing);
+show("bandwidth-path", bandwidthPathShowing);
+show("joint-test", jointTestShowing);
+show("combination", combinationShowing);
 show("dependence", dependenceShowing);
 show("checkup", checkupShowing);
 show("cointegration", cointegrationShowing);

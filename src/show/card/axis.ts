@@ -2,7 +2,7 @@
 export interface Axis {
   readonly from: number;
   readonly to: number;
-  /** Round numbers inside, at most five, with zero among them where it is inside. */
+  /** Round numbers inside, at most four, with zero among them where it is inside. */
   readonly ticks: readonly number[];
   /** Where a value stands, in percent from the left; not clipped. */
   position(x: number): number;
@@ -40,9 +40,9 @@ export function axisFor(
   return { from: start, to: end, ticks, position: (x) => (100 * (x - start)) / (end - start) };
 }
 
-/** The largest of 1, 2, 2.5, 5 times a power of ten that is at most a given width (or the smallest above it if close). */
+/** The smallest of 1, 2, 2.5, 5 times a power of ten that is at least a given width. */
 export function roundStep(width: number): number {
   const power = 10 ** Math.floor(Math.log10(width));
   const lead = width / power;
-  return (lead >= 5 ? 5 : lead >= 2.5 ? 2.5 : lead >= 2 ? 2 : 1) * power;
+  return (lead > 5 ? 10 : lead > 2.5 ? 5 : lead > 2 ? 2.5 : lead > 1 ? 2 : 1) * power;
 }

@@ -16,6 +16,8 @@ export interface Part {
   readonly plain: string;
   /** Given: folded away under this title in HTML. */
   readonly folded?: string;
+  /** Whether a folded part starts open. Default false. */
+  readonly open?: boolean;
 }
 
 /** What a card is made of, from top to bottom. */
@@ -77,7 +79,7 @@ function remarkHtml({ severity: kind, text }: Remark): Html {
 
 function partHtml(part: Part): Html {
   if (part.folded === undefined) return html`<div style="margin:0.3em 0 0.5em 0">${part.html}</div>`;
-  return html`<details style="margin:0.2em 0"><summary style="cursor:pointer">${part.folded}</summary><div style="margin:0.3em 0 0.6em 1em">${part.html}</div></details>`;
+  return html`<details${part.open && html` open`} style="margin:0.2em 0"><summary style="cursor:pointer">${part.folded}</summary><div style="margin:0.3em 0 0.6em 1em">${part.html}</div></details>`;
 }
 
 function footer({ fingerprint }: Card): string[] {

@@ -66,6 +66,34 @@ export function drawInterval(axis: Axis, interval: Interval, look: IntervalLook 
   return box(trusted(pieces.join("")));
 }
 
+/** Several intervals about one estimate, as the widest stretch they take and the one they have in common. */
+export interface Span {
+  readonly estimate: number;
+  readonly outer: readonly [number, number];
+  readonly inner: readonly [number, number];
+  /** Whether the point is filled, half filled or a ring. */
+  readonly filled: "full" | "half" | "none";
+}
+
+/** Draws several intervals as one: a thin line over the widest stretch, a thick one over what all have in common. */
+export function drawSpan(axis: Axis, span: Span): Html {
+  const colour = colours.blue;
+  const line = ([low, high]: readonly [number, number], thick: number) => {
+    const [from, to] = [clip(axis.position(low)), clip(axis.position(high))];
+    return to > from
+      ? `<span style="position:absolute;${at(from)};width:${(to - from).toFixed(2)}%;top:50%;margin-top:-${thick / 2}px;border-top:${thick}px solid ${colour}"></span>`
+      : "";
+  };
+  const point = axis.position(span.estimate);
+  const place = `position:absolute;${at(clip(point))};top:50%;margin-left:-5px;margin-top:-5px`;
+  const mark = {
+    full: `<span style="${place};width:0;height:0;border:5px solid ${colour};border-radius:50%"></span>`,
+    half: `<span style="${place};border:2px solid ${colour};border-left:5px solid ${colour};box-sizing:border-box;width:10px;height:10px;border-radius:50%"></span>`,
+    none: `<span style="${place};width:6px;height:6px;border:2px solid ${colour};border-radius:50%;box-sizing:content-box"></span>`,
+  }[span.filled];
+  return html`<div style="position:relative;height:1.85em;min-width:9em">${zeroMark(axis)}${trusted(line(span.outer, 1.5) + line(span.inner, 4) + mark)}</div>`;
+}
+
 /** The figures on an axis, for the heading of the column that intervals are drawn in. */
 export function axisHead(axis: Axis, title: string): Html {
   const label = (x: number) =>

@@ -2,7 +2,15 @@ import type { Integration, SeriesIntegration } from "../../diagnose/index.js";
 import { factsPart, tablePart } from "../card/card.js";
 import type { Showing } from "../showing.js";
 import { htmlTable } from "../table/html.js";
-import { type Cell, counted, probability, statistic, type TableModel, words } from "../table/model.js";
+import {
+  type Cell,
+  counted,
+  probability,
+  sentence,
+  statistic,
+  type TableModel,
+  words,
+} from "../table/model.js";
 import { significant } from "../text/figures.js";
 import { listed } from "../text/listed.js";
 
@@ -22,10 +30,10 @@ function testsTable(m: Integration): TableModel {
     rows: m.series.flatMap(({ column, tests }) =>
       tests.map((test): Cell[] => [
         words(column),
-        words(test.name),
+        sentence(test.name),
         test.lags === undefined ? { text: "", value: null } : counted(test.lags),
         statistic(test.statistic),
-        words(test.distribution),
+        sentence(test.distribution),
         probability(test.p),
         { text: test.note ?? "" },
       ]),

@@ -1,7 +1,15 @@
 import type { Test } from "../../diagnose/index.js";
 import { type Part, tablePart } from "../card/card.js";
 import { htmlTable } from "../table/html.js";
-import { blank, type Cell, counted, probability, statistic, type TableModel, words } from "../table/model.js";
+import {
+  blank,
+  type Cell,
+  counted,
+  probability,
+  sentence,
+  statistic,
+  type TableModel,
+} from "../table/model.js";
 
 /** The tests of a diagnostic as a table. The columns for lags and notes are there only if some test has any. */
 export function testsTable(title: string, tests: readonly Test[]): TableModel {
@@ -18,10 +26,10 @@ export function testsTable(title: string, tests: readonly Test[]): TableModel {
       ...(notes ? [{ key: "note", title: "Note" }] : []),
     ],
     rows: tests.map((test): Cell[] => [
-      words(test.name),
+      sentence(test.name),
       ...(lags ? [test.lags === undefined ? blank : counted(test.lags)] : []),
       statistic(test.statistic),
-      words(test.distribution),
+      sentence(test.distribution),
       probability(test.p),
       ...(notes ? [{ text: noteOf(test) }] : []),
     ]),

@@ -1,5 +1,5 @@
 import { count, number, pValue, type Scale, significant, written } from "../text/figures.js";
-import { name } from "../text/legible.js";
+import { legible, name } from "../text/legible.js";
 
 /** One cell: what a reader sees, and the value behind it at full precision. */
 export interface Cell {
@@ -30,6 +30,11 @@ export interface TableModel {
 /** A cell with a text from the data or one of our own. */
 export function words(text: string): Cell {
   return { text: name(text), value: text };
+}
+
+/** A cell with a text of this project that may be long, such as an estimator with its choices spelled out. */
+export function sentence(text: string): Cell {
+  return { text: legible(text) };
 }
 
 /** A cell with a number at a given scale. */

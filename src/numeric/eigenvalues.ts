@@ -65,11 +65,14 @@ function tridiagonal(a: Matrix): { diagonal: Float64Array; off: Float64Array } {
 
 function implicitQl(d: Float64Array, e: Float64Array): Float64Array {
   const n = d.length;
+  // Among eigenvalues that are all zero but for rounding no off-diagonal entry is small beside its neighbours.
+  let norm = 0;
+  for (let i = 0; i < n; i++) norm = Math.max(norm, Math.abs(d[i]!) + Math.abs(e[i] ?? 0));
   for (let l = 0; l < n; l++) {
     for (let sweep = 0; ; sweep++) {
       let m = l;
       while (m < n - 1) {
-        const size = Math.abs(d[m]!) + Math.abs(d[m + 1]!);
+        const size = Math.abs(d[m]!) + Math.abs(d[m + 1]!) + norm;
         if (Math.abs(e[m]!) <= Number.EPSILON * size) break;
         m++;
       }

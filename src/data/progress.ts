@@ -25,13 +25,14 @@ export function reportProgress(
   task: string,
   unit: string,
   total?: number,
-): { at(done: number): void; end(done: number): void } {
+): { at(done: number, total?: number): void; end(done: number): void } {
   const begun = Date.now();
   let last = begun;
   let shown = false;
-  const size = total === undefined ? {} : { total };
+  let size = total === undefined ? {} : { total };
   return {
-    at(done) {
+    at(done, newTotal) {
+      if (newTotal !== undefined) size = { total: newTotal };
       const now = Date.now();
       if (!sink || now - begun < 1000 || now - last < 100) return;
       last = now;

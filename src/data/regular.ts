@@ -54,7 +54,8 @@ export function irregularities(index: TimeIndex): Remark[] {
   return findings;
 }
 
-function listRows(rows: readonly number[]): string {
+/** `8 and 9`, `3, 7 and 12`: 0-based rows as the reader counts them. */
+export function listRows(rows: readonly number[]): string {
   const numbers = rows.map((row) => row + 1);
   return `${numbers.slice(0, -1).join(", ")} and ${numbers[numbers.length - 1]}`;
 }

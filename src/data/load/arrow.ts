@@ -1,6 +1,6 @@
 import { readFile } from "node:fs/promises";
 import { InputError } from "../../numeric/index.js";
-import { type LoadOptions, usualMissing } from "./options.js";
+import type { LoadOptions } from "./options.js";
 import type { RawColumn } from "./raw-table.js";
 import { type Cell, columnOfCells } from "./rows.js";
 
@@ -13,7 +13,6 @@ export async function readArrow(path: string, options: LoadOptions): Promise<Raw
   } catch (error) {
     throw new InputError(`load: ${path} is no Arrow IPC file: ${(error as Error).message}.`);
   }
-  const missing = options.missing ?? usualMissing;
   return table.schema.fields.map((field, c) => {
     const vector = table.getChildAt(c)!;
     const isTime = DataType.isTimestamp(field.type) || DataType.isDate(field.type);
@@ -21,6 +20,6 @@ export async function readArrow(path: string, options: LoadOptions): Promise<Raw
       const cell = vector.get(i);
       return isTime && cell !== null ? new Date(Number(cell)) : (cell as Cell);
     });
-    return columnOfCells(field.name, cells, missing, options);
+    return columnOfCells(field.name, cells, options);
   });
 }

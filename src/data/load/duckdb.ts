@@ -1,4 +1,5 @@
-import type { DuckDBConnection } from "@duckdb/node-api";
+import type { DuckDBConnection, DuckDBVector } from "@duckdb/node-api";
+import { InputError } from "../../numeric/index.js";
 import type { RawColumn } from "./raw-table.js";
 
 /** Runs `work` on a connection to an in-memory or given DuckDB database, opened read-only and closed afterwards. */
@@ -10,10 +11,12 @@ export async function withDuckDB<R>(
   const { DuckDBInstance } = await import("@duckdb/node-api");
   const instance = await DuckDBInstance.create(
     database ?? ":memory:",
-    database ? { access_mode: "READ_ONLY" } : { preserve_insertion_order: "true" },
+    database ? { access_mode: "READ_ONLY" } : {},
   );
   const connection = await instance.connect();
   try {
+    // Rows wait in a buffer of this size until they are fetched; dates are read alike on every machine.
+    await connection.run("SET streaming_buffer_size = '32MB'; SET TimeZone = 'UTC'");
     return await work(connection);
   } finally {
     connection.closeSync();
@@ -31,11 +34,67 @@ export function identifier(name: string): string {
   return `"${name.replaceAll('"', '""')}"`;
 }
 
-const numeric = /^(TINYINT|SMALLINT|INTEGER|BIGINT|HUGEINT|U[A-Z]+INT|FLOAT|DOUBLE|DECIMAL.*)$/;
+/** The first line of what DuckDB says, for what nothing better is known about. */
+export function firstLine(error: unknown): string {
+  return (error as Error).message.split("\n")[0]!.replace(/\.$/, "");
+}
+
+/** Streams the rows of a query: `take` sees each chunk's vectors and the number of its rows. Returns the number of rows. */
+export async function eachChunk(
+  connection: DuckDBConnection,
+  query: string,
+  take: (vector: (column: number) => DuckDBVector, rows: number) => void,
+  onRows?: (rows: number) => void,
+): Promise<number> {
+  const result = await connection.stream(query);
+  let rows = 0;
+  for (;;) {
+    const chunk = await result.fetchChunk();
+    if (!chunk || chunk.rowCount === 0) return rows;
+    take((column) => chunk.getColumnVector(column), chunk.rowCount);
+    rows += chunk.rowCount;
+    onRows?.(rows);
+  }
+}
+
+/** A column of numbers gathered chunk by chunk; the chunks are let go as they are put together. */
+export class NumberParts {
+  #parts: Float64Array[] = [];
+  #length = 0;
+
+  /** Adds the first `rows` values of a vector of doubles; null becomes NaN. */
+  add(vector: DuckDBVector, rows: number): void {
+    const values = new Float64Array(rows);
+    for (let i = 0; i < rows; i++) values[i] = (vector.getItem(i) as number | null) ?? Number.NaN;
+    this.#parts.push(values);
+    this.#length += rows;
+  }
+
+  join(): Float64Array {
+    const values = new Float64Array(this.#length);
+    let at = 0;
+    for (const part of this.#parts) {
+      values.set(part, at);
+      at += part.length;
+    }
+    this.#parts = [];
+    return values;
+  }
+}
+
+const numeric = /^(TINYINT|SMALLINT|INTEGER|BIGINT|HUGEINT|U[A-Z]+INT|U?BIGNUM|FLOAT|DOUBLE|DECIMAL.*)$/;
+
+interface Shape {
+  readonly name: string;
+  readonly kind: RawColumn["kind"];
+  readonly type: string;
+  /** What to select so that a vector of doubles or of texts arrives, without nulls among doubles. */
+  readonly select: string;
+}
 
 /**
- * Runs a query and collects its columns chunk by chunk: numbers as doubles, truth values as 0 and 1, everything else
- * as the text that DuckDB writes for it (dates and times in ISO 8601). `onRows` hears the rows read so far.
+ * Runs a query and collects its columns: numbers as doubles, truth values as 0 and 1, dates and times as instants,
+ * everything else as the text that DuckDB writes for it. `onRows` hears the rows read so far.
  */
 export async function collect(
   connection: DuckDBConnection,
@@ -43,43 +102,55 @@ export async function collect(
   onRows?: (rows: number) => void,
 ): Promise<RawColumn[]> {
   const described = await connection.runAndReadAll(`DESCRIBE ${query}`);
-  const shape = described.getRows().map((row) => ({ name: String(row[0]), type: String(row[1]) }));
-  const wanted = shape.map(({ name, type }) => {
-    const column = identifier(name);
-    if (type === "DOUBLE" || type === "VARCHAR") return column;
-    if (numeric.test(type)) return `CAST(${column} AS DOUBLE) AS ${column}`;
-    if (type === "BOOLEAN") return `CAST(CAST(${column} AS INTEGER) AS DOUBLE) AS ${column}`;
-    return `CAST(${column} AS VARCHAR) AS ${column}`;
-  });
-  const result = await connection.stream(`SELECT ${wanted.join(", ")} FROM (${query})`);
-  const isText = shape.map(({ type }) => !(numeric.test(type) || type === "BOOLEAN"));
-  const parts: (Float64Array | (string | null)[])[][] = shape.map(() => []);
-  let rows = 0;
-  for (;;) {
-    const chunk = await result.fetchChunk();
-    if (!chunk || chunk.rowCount === 0) break;
-    for (let c = 0; c < shape.length; c++) {
-      const vector = chunk.getColumnVector(c);
-      if (isText[c]) {
-        parts[c]!.push(Array.from({ length: chunk.rowCount }, (_, i) => vector.getItem(i) as string | null));
-      } else {
-        const values = new Float64Array(chunk.rowCount);
-        for (let i = 0; i < values.length; i++)
-          values[i] = (vector.getItem(i) as number | null) ?? Number.NaN;
-        parts[c]!.push(values);
+  const shapes = described.getRows().map((row) => shapeOf(String(row[0]), String(row[1])));
+  const twice = shapes.find(({ name }, i) => shapes.findIndex((other) => other.name === name) !== i);
+  if (twice) throw new InputError(`load: there are two columns called ${JSON.stringify(twice.name)}.`);
+  const numbers = shapes.map(({ kind }) => (kind === "text" ? undefined : new NumberParts()));
+  const texts = shapes.map((): (string | null)[] => []);
+  const select = shapes.map((shape) => shape.select).join(", ");
+  await eachChunk(
+    connection,
+    `SELECT ${select} FROM (${query})`,
+    (vector, rows) => {
+      for (let c = 0; c < shapes.length; c++) {
+        const cells = vector(c);
+        const part = numbers[c];
+        if (part) part.add(cells, rows);
+        else for (let i = 0; i < rows; i++) texts[c]!.push(cells.getItem(i) as string | null);
       }
-    }
-    rows += chunk.rowCount;
-    onRows?.(rows);
-  }
-  return shape.map(({ name, type }, c): RawColumn => {
-    if (isText[c]) return { name, kind: "text", values: (parts[c] as (string | null)[][]).flat() };
-    const values = new Float64Array(rows);
-    let at = 0;
-    for (const part of parts[c] as Float64Array[]) {
-      values.set(part, at);
-      at += part.length;
-    }
-    return { name, kind: type === "BOOLEAN" ? "boolean" : "number", values };
+    },
+    onRows,
+  );
+  return shapes.map(({ name, kind, type }, c): RawColumn => {
+    if (kind === "text") return { name, kind, values: texts[c]! };
+    const values = numbers[c]!.join();
+    if (kind !== "instant") return { name, kind, values };
+    return {
+      name,
+      kind,
+      values,
+      form: type === "DATE" ? "date" : "date-time",
+      offset: type.endsWith("WITH TIME ZONE"),
+    };
   });
+}
+
+function shapeOf(name: string, type: string): Shape {
+  const column = identifier(name);
+  const filled = (expression: string) => `coalesce(CAST(${expression} AS DOUBLE), 'nan'::DOUBLE)`;
+  if (numeric.test(type)) return { name, type, kind: "number", select: filled(column) };
+  if (type === "BOOLEAN")
+    return { name, type, kind: "boolean", select: filled(`CAST(${column} AS INTEGER)`) };
+  if (type === "DATE") {
+    return { name, type, kind: "instant", select: filled(`epoch_ms(CAST(${column} AS TIMESTAMP))`) };
+  }
+  if (type.startsWith("TIMESTAMP"))
+    return { name, type, kind: "instant", select: filled(milliseconds(column)) };
+  return { name, type, kind: "text", select: type === "VARCHAR" ? column : `CAST(${column} AS VARCHAR)` };
+}
+
+/** Milliseconds of a time stamp; one that is finer than a millisecond stops the query. */
+function milliseconds(column: string): string {
+  const micro = `epoch_us(${column})`;
+  return `CASE WHEN ${micro} % 1000 <> 0 THEN error('a time is finer than a millisecond') ELSE epoch_ms(${column}) END`;
 }

@@ -1,5 +1,6 @@
 import { InputError } from "../../numeric/index.js";
-import { type LoadOptions, usualMissing } from "./options.js";
+import { type LoadOptions, missingTexts } from "./options.js";
+import { RowProblem } from "./problem.js";
 import type { RawColumn, RawTable } from "./raw-table.js";
 
 /** A cell of an array of rows. */
@@ -15,53 +16,71 @@ export function fromRows(rows: readonly Readonly<Record<string, Cell>>[], option
       throw new InputError(`load: row ${i + 1} has a column ${JSON.stringify(extra)} that row 1 has not.`);
     }
   });
-  const missing = options.missing ?? usualMissing;
   const columns = names.map((name) =>
     columnOfCells(
       name,
       rows.map((row) => row[name]),
-      missing,
       options,
     ),
   );
   return { columns, findings: [], description: "rows" };
 }
 
-/** Makes one column of cells of mixed origin; the kind of the first cell that is not missing decides. */
-export function columnOfCells(
-  name: string,
-  cells: readonly Cell[],
-  missing: readonly string[],
-  options: LoadOptions,
-): RawColumn {
+/**
+ * Makes one column of cells of mixed origin; the kind of the first cell that is not missing decides. Throws RowProblem
+ * for a cell of another kind, and for a whole number too large for a double.
+ */
+export function columnOfCells(name: string, cells: readonly Cell[], options: LoadOptions): RawColumn {
+  const missing = missingTexts(options);
   const isMissing = (cell: Cell) =>
     cell === null ||
     cell === undefined ||
     (typeof cell === "number" && Number.isNaN(cell)) ||
-    (typeof cell === "string" && missing.includes(cell.trim()));
+    (typeof cell === "string" && missing.has(cell.trim()));
+  const where = `column ${JSON.stringify(name)}`;
   const first = cells.find((cell) => !isMissing(cell));
-  const asText = (cell: Cell) => (cell instanceof Date ? dateText(cell) : String(cell));
-  if (
-    typeof first === "string" ||
-    first instanceof Date ||
-    name === options.time ||
-    options.text?.includes(name)
-  ) {
-    return { name, kind: "text", values: cells.map((cell) => (isMissing(cell) ? null : asText(cell))) };
+  if (first instanceof Date) return columnOfDates(name, cells, isMissing);
+  const isTime = name === options.time;
+  if (typeof first === "string" || options.text?.includes(name) || (isTime && typeof first !== "number")) {
+    const values = cells.map((cell, row) => {
+      if (isMissing(cell)) return null;
+      if (typeof cell === "object")
+        throw new RowProblem(row, where, "the cell is no text, though those before are.");
+      return String(cell);
+    });
+    return { name, kind: "text", values };
   }
-  const values = Float64Array.from(cells, (cell, i) => {
+  const values = Float64Array.from(cells, (cell, row) => {
     if (isMissing(cell)) return Number.NaN;
-    if (typeof cell === "number" || typeof cell === "boolean" || typeof cell === "bigint")
-      return Number(cell);
-    throw new InputError(
-      `load: row ${i + 1}, column ${JSON.stringify(name)}: ${JSON.stringify(asText(cell))} is not a number, but the cells before are.`,
-    );
+    if (typeof cell === "bigint" && Number.isInteger(Number(cell)) && BigInt(Number(cell)) !== cell) {
+      throw new RowProblem(
+        row,
+        where,
+        `${cell} has more digits than a double holds. Take fewer, or keep it as text.`,
+      );
+    }
+    if (typeof cell === "number" || typeof cell === "bigint") return Number(cell);
+    if (typeof cell === "boolean" && typeof first === "boolean") return cell ? 1 : 0;
+    throw new RowProblem(row, where, `${shown(cell)} is not a number, but the cells before are.`);
   });
   return { name, kind: typeof first === "boolean" ? "boolean" : "number", values };
 }
 
-/** A Date as an ISO date where it is midnight in UTC, and as a date-time with offset otherwise. */
-function dateText(date: Date): string {
-  const text = date.toISOString();
-  return text.endsWith("T00:00:00.000Z") ? text.slice(0, 10) : text;
+function shown(cell: Cell): string {
+  return cell instanceof Date ? cell.toISOString() : (JSON.stringify(cell) ?? String(cell));
+}
+
+/** Dates are days when all of them are midnights in UTC, and instants otherwise. */
+function columnOfDates(name: string, cells: readonly Cell[], isMissing: (cell: Cell) => boolean): RawColumn {
+  const values = Float64Array.from(cells, (cell, row) => {
+    if (isMissing(cell)) return Number.NaN;
+    if (cell instanceof Date && !Number.isNaN(cell.getTime())) return cell.getTime();
+    throw new RowProblem(
+      row,
+      `column ${JSON.stringify(name)}`,
+      `${cell} is no date, though the cells before are.`,
+    );
+  });
+  const days = values.every((value) => Number.isNaN(value) || value % 86_400_000 === 0);
+  return { name, kind: "instant", values, form: days ? "date" : "date-time", offset: !days };
 }

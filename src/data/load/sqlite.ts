@@ -1,5 +1,5 @@
 import { InputError } from "../../numeric/index.js";
-import { type LoadOptions, usualMissing } from "./options.js";
+import type { LoadOptions } from "./options.js";
 import type { RawColumn } from "./raw-table.js";
 import { type Cell, columnOfCells } from "./rows.js";
 
@@ -10,12 +10,10 @@ export async function readSqlite(path: string, sql: string, options: LoadOptions
   try {
     const rows = database.all(sql) as Record<string, Cell>[];
     if (rows.length === 0) throw new InputError(`load: the query on ${path} gives no rows.`);
-    const missing = options.missing ?? usualMissing;
     return Object.keys(rows[0]!).map((name) =>
       columnOfCells(
         name,
         rows.map((row) => row[name]),
-        missing,
         options,
       ),
     );

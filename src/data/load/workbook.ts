@@ -1,5 +1,5 @@
 import { InputError } from "../../numeric/index.js";
-import { type LoadOptions, usualMissing } from "./options.js";
+import type { LoadOptions } from "./options.js";
 import type { RawColumn } from "./raw-table.js";
 import { type Cell, columnOfCells } from "./rows.js";
 
@@ -26,12 +26,10 @@ export async function readWorkbook(path: string, options: LoadOptions): Promise<
   const twice = names.find((name, i) => names.indexOf(name) !== i);
   if (twice !== undefined)
     throw new InputError(`load: ${path} has two columns called ${JSON.stringify(twice)}.`);
-  const missing = options.missing ?? usualMissing;
   return names.map((name, c) =>
     columnOfCells(
       name,
       rows.map((row) => row[c]),
-      missing,
       options,
     ),
   );

@@ -126,13 +126,13 @@ function seasonal(table: Pick<TimeTable, "index">, column: NumberColumn): Float6
   const counts = new Float64Array(length);
   column.values.forEach((x, i) => {
     if (Number.isNaN(x)) return;
-    const season = seasonOf(step, ordinals[i]!);
+    const season = seasonOf(step, ordinals[i]!, table.index.zone);
     sums[season]! += x;
     counts[season]! += 1;
   });
   return column.values.map((x, i) => {
     if (!Number.isNaN(x)) return x;
-    const season = seasonOf(step, ordinals[i]!);
+    const season = seasonOf(step, ordinals[i]!, table.index.zone);
     if (counts[season] === 0) {
       throw new InputError(
         `fill: "${column.name}" has no value in any period of the season of ${periodLabel(table.index, ordinals[i]!)}.`,

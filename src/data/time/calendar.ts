@@ -33,6 +33,11 @@ export function ordinalOfInstant(step: Step, milliseconds: number): number {
   return Math.floor((unitOrdinal(step.unit, milliseconds) - (step.offset ?? 0)) / step.count);
 }
 
+/** Whether periods of a unit are parts of a day, counted in UTC, and not days or longer, counted on the calendar. */
+export function isClockUnit(unit: StepUnit): boolean {
+  return unit === "hour" || unit === "minute" || unit === "second" || unit === "millisecond";
+}
+
 /** Whole units from the unit's origin to the one that holds an instant. */
 export function unitOrdinal(unit: StepUnit, milliseconds: number): number {
   const fixed = unitMilliseconds[unit];

@@ -1,5 +1,5 @@
-import { Temporal } from "temporal-polyfill";
 import { epochDay, epochDayOfWeek } from "./calendar.js";
+import { zoneClock } from "./zone.js";
 
 /** How a period can be written. */
 export type WrittenForm =
@@ -20,13 +20,22 @@ export interface FormOptions {
   readonly dates?: "day-month" | "month-day";
   /** IANA zone of date-times written without an offset; UTC without it. */
   readonly zone?: string;
-  /** The repeated hour at the end of daylight saving: its first or its second pass. Refused without it. */
-  readonly repeatedHour?: "earlier" | "later";
+  /**
+   * The hour that the end of daylight saving repeats: its first pass, its second, or both in the order in which they
+   * stand in the file. Refused without it.
+   */
+  readonly repeatedHour?: "earlier" | "later" | "in order";
 }
 
-/** A period read: its start in milliseconds of UTC (dates and longer periods: of the calendar), or what is wrong. */
+/** A period read, or what is wrong with it. */
 export type Reading =
-  | { readonly milliseconds: number; readonly form: WrittenForm }
+  | {
+      readonly form: WrittenForm;
+      /** Start of the period in milliseconds of UTC; of dates and longer periods, of their midnight as if in UTC. */
+      readonly milliseconds: number;
+      /** The same on the clock that the text was written by: differs where an offset or a zone is known. */
+      readonly wall: number;
+    }
   | { readonly problem: string };
 
 const dayMilliseconds = 86_400_000;
@@ -60,7 +69,9 @@ export function readInstant(written: string, options: FormOptions = {}): Reading
   const form = formOf(text, options.dates);
   const year = Number(text.slice(0, 4));
   const days = (day: number | undefined, form: WrittenForm): Reading =>
-    day === undefined ? { problem: "there is no such date" } : { milliseconds: day * dayMilliseconds, form };
+    day === undefined
+      ? { problem: "there is no such date" }
+      : { milliseconds: day * dayMilliseconds, wall: day * dayMilliseconds, form };
   switch (form) {
     case undefined:
       return { problem: "no known written form of a period" };
@@ -90,7 +101,7 @@ export function readInstant(written: string, options: FormOptions = {}): Reading
     case "date-time":
       return readDateTime(text, options);
     case "integer":
-      return { milliseconds: Number(text), form };
+      return { milliseconds: Number(text), wall: Number(text), form };
   }
 }
 
@@ -101,39 +112,42 @@ function readDateTime(text: string, options: FormOptions): Reading {
   if (start === undefined || Number(hour) > 23 || Number(minute) > 59 || Number(second) > 59) {
     return { problem: "there is no such date and time" };
   }
+  if (/[1-9]/.test(fraction.slice(3))) return { problem: "it is finer than a millisecond" };
   const clock = Number(hour) * 3_600_000 + Number(minute) * 60_000 + Number(second) * 1_000;
-  const local = start * dayMilliseconds + clock + Math.floor(Number(`0.${fraction}`) * 1000);
-  if (offset !== undefined) return { milliseconds: local - offsetMilliseconds(offset), form: "date-time" };
-  if (!options.zone || options.zone === "UTC") return { milliseconds: local, form: "date-time" };
-  return inZone(local, options);
+  const wall = start * dayMilliseconds + clock + Number(fraction.slice(0, 3).padEnd(3, "0"));
+  if (offset !== undefined) {
+    const ahead = offsetMilliseconds(offset);
+    if (ahead === undefined) return { problem: `there is no offset ${offset}` };
+    return { milliseconds: wall - ahead, wall, form: "date-time" };
+  }
+  if (!options.zone) return { milliseconds: wall, wall, form: "date-time" };
+  const instant = instantOfWall(wall, options.zone, options.repeatedHour);
+  return typeof instant === "string"
+    ? { problem: instant }
+    : { milliseconds: instant, wall, form: "date-time" };
 }
 
-function offsetMilliseconds(offset: string): number {
+function offsetMilliseconds(offset: string): number | undefined {
   if (offset === "Z") return 0;
   const sign = offset.startsWith("-") ? -1 : 1;
   const digits = offset.slice(1).replace(":", "").padEnd(4, "0");
-  return sign * (Number(digits.slice(0, 2)) * 60 + Number(digits.slice(2))) * 60_000;
+  const [hours, minutes] = [Number(digits.slice(0, 2)), Number(digits.slice(2))];
+  return hours > 18 || minutes > 59 ? undefined : sign * (hours * 60 + minutes) * 60_000;
 }
 
-/** Wall time to instant: an hour that the clock skips is no time, one that it repeats needs a word. */
-function inZone(local: number, options: FormOptions): Reading {
-  const zone = options.zone!;
-  const wall = Temporal.PlainDateTime.from(new Date(local).toISOString().slice(0, -1));
-  const earlier = wall.toZonedDateTime(zone, { disambiguation: "earlier" });
-  const later = wall.toZonedDateTime(zone, { disambiguation: "later" });
-  if (earlier.epochMilliseconds === later.epochMilliseconds) {
-    return { milliseconds: earlier.epochMilliseconds, form: "date-time" };
-  }
-  if (!earlier.toPlainDateTime().equals(wall)) {
-    return { problem: `the clocks of ${zone} skip this time when daylight saving begins` };
-  }
-  if (options.repeatedHour === undefined) {
-    return {
-      problem:
-        `the clocks of ${zone} show this time twice when daylight saving ends; write the offset (+01:00), or say ` +
-        `repeatedHour: "earlier" or "later"`,
-    };
-  }
-  const chosen = options.repeatedHour === "earlier" ? earlier : later;
-  return { milliseconds: chosen.epochMilliseconds, form: "date-time" };
+/** Wall time to instant, or why there is none: a time that the clock skips is no time, one that it repeats needs a word. */
+export function instantOfWall(
+  wall: number,
+  zone: string,
+  repeatedHour?: FormOptions["repeatedHour"],
+): number | string {
+  const instants = zoneClock(zone).instantsOf(wall);
+  if (instants.length === 1) return instants[0]!;
+  if (instants.length === 0) return `the clocks of ${zone} skip this time when daylight saving begins`;
+  if (repeatedHour === "earlier") return instants[0]!;
+  if (repeatedHour === "later") return instants[instants.length - 1]!;
+  return (
+    `the clocks of ${zone} show this time twice when daylight saving ends; write the offset (+01:00), or say ` +
+    'repeatedHour: "earlier", "later" or "in order"'
+  );
 }

@@ -18,8 +18,12 @@ export function parseStep(every: string | Step): Step {
   return { unit, count: count ? Number(count) : 1 };
 }
 
-/** The step that periods written in one form are apart: instants in ascending order, in milliseconds. */
-export function inferStep(instants: Float64Array, form: WrittenForm): Step | undefined {
+/**
+ * The step that periods written in one form are apart; undefined when there is but one period. `instants` (UTC) and
+ * `walls` (the clock as written) are in milliseconds, in ascending order.
+ */
+export function inferStep(instants: Float64Array, walls: Float64Array, form: WrittenForm): Step | undefined {
+  if (instants.length === 0 || instants[0] === instants[instants.length - 1]) return undefined;
   switch (form) {
     case "integer":
       return withCount("integer", instants);
@@ -30,53 +34,65 @@ export function inferStep(instants: Float64Array, form: WrittenForm): Step | und
     case "week":
       return withCount(form, instants);
     case "date-time":
-      return isDaily(instants) ? inferFromDates(instants) : inferFromClock(instants);
+      return isDaily(walls) ? inferFromDates(walls) : inferFromClock(instants);
     default:
-      return inferFromDates(instants);
+      return inferFromDates(walls);
   }
 }
 
-/** Whether every instant falls on the same time of day, in the wall time that it was written in. */
-function isDaily(instants: Float64Array): boolean {
-  const clock = mod(instants[0]!, dayMilliseconds);
-  return instants.length > 1 && instants.every((at) => mod(at, dayMilliseconds) === clock);
+/** Whether every row stands at the same time of day on the clock that it was written by. */
+function isDaily(walls: Float64Array): boolean {
+  const clock = mod(walls[0]!, dayMilliseconds);
+  return walls.every((at) => mod(at, dayMilliseconds) === clock);
 }
 
-function inferFromClock(instants: Float64Array): Step | undefined {
+function inferFromClock(instants: Float64Array): Step {
   const gap = commonGap(instants);
-  if (gap === 0) return undefined;
-  for (const unit of ["day", "hour", "minute", "second", "millisecond"] as const) {
+  // Not days: a day of 23 hours is none of the clock's steps.
+  for (const unit of ["hour", "minute", "second"] as const) {
     if (gap % unitMilliseconds[unit]! === 0) return withCount(unit, instants);
   }
-  return undefined;
+  return withCount("millisecond", instants);
 }
 
-function inferFromDates(instants: Float64Array): Step | undefined {
-  const days = instants.map((at) => Math.floor(at / dayMilliseconds));
+function inferFromDates(walls: Float64Array): Step {
+  const days = walls.map((at) => Math.floor(at / dayMilliseconds));
   const gap = commonGap(days);
-  if (gap === 0) return undefined;
-  if (standOnOneDayOfMonth(days) && days.length > 1 && smallestGap(days) >= 28) {
-    const months = instants.map((at) => unitOrdinal("month", at));
-    const apart = commonGap(months);
-    const start = mod(months[0]!, apart);
-    if (apart % 12 === 0 && mod(months[0]!, 12) === 0) return withCount("year", instants);
-    if (apart % 6 === 0 && apart % 12 !== 0 && start % 6 === 0) return withCount("half-year", instants);
-    if (apart % 3 === 0 && apart % 6 !== 0 && start % 3 === 0) return withCount("quarter", instants);
-    return withCount("month", instants);
-  }
-  if (gap % 7 === 0) return withCount("week", instants);
+  if (smallestGap(days) >= 28 && standOnOneDayOfMonth(days)) return inferFromMonths(walls, days);
+  if (gap % 7 === 0) return withCount("week", walls);
   const weekend = days.some((day) => mod(day + 3, 7) >= 5);
   const crossed = days.some((day, i) => i > 0 && mod(day + 3, 7) === 0 && day - days[i - 1]! === 3);
-  if (!weekend && crossed) return withCount("business-day", instants);
-  return withCount("day", instants);
+  if (!weekend && crossed) return withCount("business-day", walls);
+  return withCount("day", walls);
+}
+
+/** Years, half-years and quarters are told by their first month, or by the last days of their last months. */
+function inferFromMonths(walls: Float64Array, days: Float64Array): Step {
+  const months = walls.map((at) => unitOrdinal("month", at));
+  const apart = commonGap(months);
+  const atEnds = days.every(isLastOfMonth);
+  for (const [unit, length] of [
+    ["year", 12],
+    ["half-year", 6],
+    ["quarter", 3],
+  ] as const) {
+    const place = mod(months[0]!, length);
+    if (apart % length === 0 && (place === 0 || (atEnds && place === length - 1)))
+      return withCount(unit, walls);
+  }
+  return withCount("month", walls);
+}
+
+function isLastOfMonth(day: number): boolean {
+  return new Date((day + 1) * dayMilliseconds).getUTCDate() === 1;
 }
 
 /** All on the 15th, say, or all on the last day of their months. */
 function standOnOneDayOfMonth(days: Float64Array): boolean {
-  const dates = Array.from(days, (day) => new Date(day * dayMilliseconds));
-  const first = dates[0]!.getUTCDate();
-  if (dates.every((date) => date.getUTCDate() === first)) return true;
-  return days.every((day) => new Date((day + 1) * dayMilliseconds).getUTCDate() === 1);
+  const dayOfMonth = (day: number) => new Date(day * dayMilliseconds).getUTCDate();
+  const first = dayOfMonth(days[0]!);
+  if (days.every((day) => dayOfMonth(day) === first)) return true;
+  return days.every(isLastOfMonth);
 }
 
 function withCount(unit: StepUnit, instants: Float64Array): Step {

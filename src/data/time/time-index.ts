@@ -1,8 +1,8 @@
-import { Temporal } from "temporal-polyfill";
 import { InputError } from "../../numeric/index.js";
-import { isoWeek, mod, ordinalOfInstant, startOfPeriod, unitsOf } from "./calendar.js";
+import { isClockUnit, isoWeek, mod, ordinalOfInstant, startOfPeriod, unitsOf } from "./calendar.js";
 import { readInstant } from "./forms.js";
 import { type Step, seasonLength, stepName } from "./step.js";
+import { zoneClock } from "./zone.js";
 
 /** The time axis of a table: which period each row stands for. */
 export interface TimeIndex {
@@ -17,6 +17,11 @@ export interface TimeIndex {
 }
 
 type Axis = Pick<TimeIndex, "step" | "zone">;
+
+/** Throws InputError, suggesting the nearest, for a name that is no IANA time zone. */
+export function validZone(zone: string): void {
+  zoneClock(zone);
+}
 
 const pad = (value: number, width = 2) => String(value).padStart(width, "0");
 const yearText = (year: number) => (year < 0 ? `-${pad(-year, 6)}` : pad(year, 4));
@@ -48,14 +53,17 @@ export function periodLabel(axis: Axis, ordinal: number): string {
   }
 }
 
-function instantLabel(milliseconds: number, step: Step, zone?: string): string {
+function instantLabel(instant: number, step: Step, zone?: string): string {
   const length = step.unit === "millisecond" ? 23 : step.unit === "second" ? 19 : 16;
-  if (!zone || zone === "UTC") return new Date(milliseconds).toISOString().slice(0, length).replace("T", " ");
-  const local = Temporal.Instant.fromEpochMilliseconds(milliseconds).toZonedDateTimeISO(zone);
-  const text = local
-    .toPlainDateTime()
-    .toString({ smallestUnit: step.unit === "millisecond" ? "millisecond" : "second" });
-  return `${text.slice(0, length).replace("T", " ")}${local.offset}`;
+  const wall = zone ? zoneClock(zone).wallOf(instant) : instant;
+  const text = new Date(wall).toISOString().slice(0, length).replace("T", " ");
+  return zone && zone !== "UTC" ? text + offsetText(wall - instant) : text;
+}
+
+/** An offset from UTC as ISO 8601 writes it. */
+function offsetText(milliseconds: number): string {
+  const minutes = Math.round(Math.abs(milliseconds) / 60_000);
+  return `${milliseconds < 0 ? "-" : "+"}${pad(Math.floor(minutes / 60))}:${pad(minutes % 60)}`;
 }
 
 /** Labels of all rows. */
@@ -84,11 +92,14 @@ export function parsePeriod(axis: Axis, text: string | number): number {
         `"${periodLabel(axis, ordinalOfInstant(step, Date.UTC(2024, 2, 5)))}"`,
     );
   }
-  return ordinalOfInstant(step, read.milliseconds);
+  return ordinalOfInstant(step, isClockUnit(step.unit) ? read.milliseconds : read.wall);
 }
 
-/** Which season of the cycle a period belongs to, 0-based: 0 for January, Q1, Monday, the first hour. */
-export function seasonOf(step: Step, ordinal: number): number {
+/**
+ * Which season of the cycle a period belongs to, 0-based: 0 for January, Q1, Monday, the first hour. Hours and parts
+ * of them count on the clock of `zone` (default UTC).
+ */
+export function seasonOf(step: Step, ordinal: number, zone?: string): number {
   const length = seasonLength(step);
   if (length === undefined) return 0;
   if (step.unit === "week") {
@@ -96,7 +107,17 @@ export function seasonOf(step: Step, ordinal: number): number {
     return Math.min(Math.floor((week - 1) / step.count), length - 1); // week 53 counts with week 52
   }
   if (step.unit === "day") return mod(ordinal + 3, length); // 1970-01-01 was a Thursday
+  if (zone && isClockUnit(step.unit)) {
+    const wall = zoneClock(zone).wallOf(startOfPeriod(step, ordinal));
+    return mod(ordinalOfInstant(step, wall), length);
+  }
   return mod(ordinal, length);
+}
+
+/** Start of a period on the wall clock of the index's zone, in milliseconds; for days and longer, of their midnight. */
+export function wallStart(axis: Axis, ordinal: number): number {
+  const start = startOfPeriod(axis.step, ordinal);
+  return axis.zone && isClockUnit(axis.step.unit) ? zoneClock(axis.zone).wallOf(start) : start;
 }
 
 /** Start of a period as a Date in UTC, for charts. Integers become years so far apart that only their order shows. */

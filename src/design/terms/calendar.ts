@@ -47,7 +47,7 @@ export function seasonal(options: SeasonalOptions = {}): Term {
         `seasonal: steps of one ${stepName(index.step)} have no season; use fourier(n, period).`,
       );
     }
-    const seasons = index.ordinals.map((ordinal) => seasonOf(index.step, ordinal));
+    const seasons = index.ordinals.map((ordinal) => seasonOf(index.step, ordinal, index.zone));
     const name = (season: number) => seasonName(index.step, season);
     const note =
       contrast === "base"

@@ -6,7 +6,11 @@ export interface Matrix {
 }
 
 /** A matrix over `data` (not copied), or of zeros. */
-export function matrix(rows: number, columns: number, data = new Float64Array(rows * columns)): Matrix {
+export function matrix(
+  rows: number,
+  columns: number,
+  data: Float64Array = new Float64Array(rows * columns),
+): Matrix {
   return { rows, columns, data };
 }
 

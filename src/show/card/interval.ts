@@ -98,5 +98,11 @@ export function drawSpan(axis: Axis, span: Span): Html {
 export function axisHead(axis: Axis, title: string): Html {
   const label = (x: number) =>
     `<span style="position:absolute;${at(axis.position(x))};width:6em;margin-left:-3em;text-align:center;white-space:nowrap">${number(x, 3)}</span>`;
-  return html`<div style="font-weight:bold;white-space:normal">${title}</div><div style="position:relative;height:1.3em;min-width:9em;font-weight:normal;opacity:0.8">${trusted(axis.ticks.map(label).join(""))}</div>`;
+  // Where zero is not on the axis, its side is said.
+  const zero = axis.position(0);
+  const aside =
+    zero < 0 || zero > 100
+      ? `<span style="position:absolute;${zero < 0 ? "left" : "right"}:0">${zero < 0 ? "← 0" : "0 →"}</span>`
+      : "";
+  return html`<div style="font-weight:bold;white-space:normal">${title}</div><div style="position:relative;height:1.3em;min-width:9em;font-weight:normal;opacity:0.8">${trusted(aside + axis.ticks.map(label).join(""))}</div>`;
 }

@@ -17,7 +17,8 @@ export function drawSvg(spec: TopLevelSpec): Promise<string> {
 async function draw(spec: TopLevelSpec): Promise<string> {
   const [vega, vegaLite] = await loading!;
   const logger = vega.logger(vega.Error);
-  const compiled = vegaLite.compile(spec, { logger });
+  // A copy: Vega marks the rows of the data that it is given, and a chart's specification is to stay as it is.
+  const compiled = vegaLite.compile(structuredClone(spec), { logger });
   const loader = vega.loader();
   const refuse = () => Promise.reject(new Error("a chart loads nothing"));
   Object.assign(loader, { load: refuse, sanitize: refuse, http: refuse, file: refuse });

@@ -90,8 +90,10 @@ export function pictures({ body, panels }: ChartSource): TopLevelSpec[] {
   return (panels ?? [body]).map(complete);
 }
 
+// By way of JSON, so that what is drawn here is what JupyterLab is sent: no undefined fields, null for NaN.
 function complete(body: ChartBody): TopLevelSpec {
-  return { $schema: schema, background: "transparent", ...body, config } as unknown as TopLevelSpec;
+  const spec = { $schema: schema, background: "transparent", ...body, config };
+  return JSON.parse(JSON.stringify(spec)) as TopLevelSpec;
 }
 
 /**

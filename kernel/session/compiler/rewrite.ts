@@ -108,7 +108,9 @@ export function annotateAny(source: string, offsets: readonly number[]): readonl
  * run, and interrupted, on its own. Undefined where a top-level `for await` leaves no way to do that.
  */
 export function awaitsToYields(js: string): string | undefined {
-  const file = ts.createSourceFile("cell.js", js, ts.ScriptTarget.Latest, true, ts.ScriptKind.JS);
+  // Only in a module is a top-level `await (x)` an await and not the call of a function of that name.
+  const module = `${js}\nexport {};`;
+  const file = ts.createSourceFile("cell.js", module, ts.ScriptTarget.Latest, true, ts.ScriptKind.JS);
   const edits: Edit[] = [];
   let loop = false;
   const visit = (node: TypeScript.Node): void => {

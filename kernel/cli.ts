@@ -45,7 +45,7 @@ program
       ...(options.browser ? {} : { browser: false }),
       pages: options.pages ?? false,
       runToPage: async (notebook, executed, page) =>
-        (await run([notebook], { html: page, output: executed }, () => {})) === 0,
+        (await run([notebook], { html: page, output: executed })) === 0,
     });
   });
 
@@ -89,7 +89,6 @@ program
 async function run(
   notebooks: readonly string[],
   options: { html?: string; output?: string; timeout?: number },
-  say?: (line: string) => void,
 ): Promise<number> {
   const { runNotebooks } = await import("./rerun/index.js");
   const { createSession } = await import("./session/index.js");
@@ -106,7 +105,6 @@ async function run(
       maker,
       signal: stop.signal,
       open: (directory, emit) => createSession({ directory, emit }),
-      ...(say ? { say } : {}),
     });
   } finally {
     process.off("SIGINT", interrupted);

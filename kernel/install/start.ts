@@ -14,7 +14,7 @@ export interface StartOptions {
   readonly pages?: boolean;
   readonly at?: Places;
   readonly say?: (line: string) => void;
-  /** Runs a notebook with no Jupyter, writing the executed notebook and a page beside each other. */
+  /** Runs a notebook with no Jupyter, writes the executed notebook and a page, and says where and how it went. */
   readonly runToPage: (notebook: string, executed: string, page: string) => Promise<boolean>;
 }
 
@@ -99,9 +99,6 @@ async function writePages(
     const page = join(folder, `${stem}.html`);
     const passed = await runToPage(join(at.notebooks, name), executed, page);
     sound &&= passed;
-    say(`${name}: ${passed ? "ran to its end" : "stopped at a cell that failed"}`);
-    say(`  executed notebook: ${executed}`);
-    say(`  page:              ${page}`);
   }
   return sound ? 0 : 1;
 }

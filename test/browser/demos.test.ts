@@ -24,6 +24,7 @@ const outputs = ".jp-NotebookPanel:not(.lm-mod-hidden) .jp-OutputArea-output";
 const pictures = join(places().state, "screenshots");
 let lab: IsolatedLab;
 let browser: Browser;
+let chartsSeen = 0;
 
 before(async () => {
   if (skip) return;
@@ -78,8 +79,8 @@ for (const name of demoNotebooks()) {
       assert.equal(error, undefined, `${error?.ename}: ${error?.evalue}\nin\n${cell.source}`);
     }
     const { held, drawn } = await charts(page);
-    assert.ok(held > 0, "the notebook holds a chart");
     assert.equal(drawn, held, "every chart is drawn");
+    chartsSeen += drawn;
     assert.deepEqual(await brokenPictures(page), []);
 
     const light = await shot("light");
@@ -104,6 +105,10 @@ for (const name of demoNotebooks()) {
     await page.close();
   });
 }
+
+test("the demo notebooks show charts", { skip }, () => {
+  assert.ok(chartsSeen > 0);
+});
 
 test("nothing was written into the user's home", { skip }, () => {
   // Chromium is ours, not the server's; what is looked at is what the server and the kernels were given as home.

@@ -1,6 +1,6 @@
 import { open } from "node:fs/promises";
 import { InputError } from "../../numeric/index.js";
-import { collect, firstLine, withDuckDB } from "./duckdb.js";
+import { collect, said, withDuckDB } from "./duckdb.js";
 import { fileFingerprint, requireFile } from "./file.js";
 import type { LoadOptions } from "./options.js";
 import type { RawTable } from "./raw-table.js";
@@ -18,12 +18,13 @@ export async function loadQuery(
   await requireFile(database);
   const columns = (await isSqlite(database))
     ? await readSqlite(database, sql, options)
-    : await withDuckDB((connection) => collect(connection, sql.replace(/;\s*$/, "")), database).catch(
-        (error) => {
-          if (error instanceof InputError) throw error;
-          throw new InputError(`load: the query on ${database} failed: ${firstLine(error)}.`);
-        },
-      );
+    : await withDuckDB(
+        (connection) => collect(connection, sql.replace(/;\s*$/, ""), options),
+        database,
+      ).catch((error) => {
+        if (error instanceof InputError) throw error;
+        throw new InputError(`load: the query on ${database} failed: ${said(error)}.`);
+      });
   const description = `${database} (${sql})`;
   return { columns, findings: [], description, fingerprint: await fileFingerprint(database) };
 }

@@ -1,5 +1,6 @@
 import type { DuckDBConnection, DuckDBVector } from "@duckdb/node-api";
 import { InputError } from "../../numeric/index.js";
+import type { LoadOptions } from "./options.js";
 import type { RawColumn } from "./raw-table.js";
 
 /** Runs `work` on a connection to an in-memory or given DuckDB database, opened read-only and closed afterwards. */
@@ -34,9 +35,12 @@ export function identifier(name: string): string {
   return `"${name.replaceAll('"', '""')}"`;
 }
 
-/** The first line of what DuckDB says, for what nothing better is known about. */
-export function firstLine(error: unknown): string {
-  return (error as Error).message.split("\n")[0]!.replace(/\.$/, "");
+/** The first line of what DuckDB says, less the name of its error class. */
+export function said(error: unknown): string {
+  return (error as Error).message
+    .split("\n")[0]!
+    .replace(/^[A-Z][A-Za-z ]* Error: /, "")
+    .replace(/\.\s*$/, "");
 }
 
 /** Streams the rows of a query: `take` sees each chunk's vectors and the number of its rows. Returns the number of rows. */
@@ -99,10 +103,14 @@ interface Shape {
 export async function collect(
   connection: DuckDBConnection,
   query: string,
+  options: LoadOptions,
   onRows?: (rows: number) => void,
 ): Promise<RawColumn[]> {
   const described = await connection.runAndReadAll(`DESCRIBE ${query}`);
-  const shapes = described.getRows().map((row) => shapeOf(String(row[0]), String(row[1])));
+  const shapes = described.getRows().map((row) => {
+    const [name, type] = [String(row[0]), String(row[1])];
+    return options.text?.includes(name) ? asText(name, type) : shapeOf(name, type);
+  });
   const twice = shapes.find(({ name }, i) => shapes.findIndex((other) => other.name === name) !== i);
   if (twice) throw new InputError(`load: there are two columns called ${JSON.stringify(twice.name)}.`);
   const numbers = shapes.map(({ kind }) => (kind === "text" ? undefined : new NumberParts()));
@@ -138,19 +146,42 @@ export async function collect(
 function shapeOf(name: string, type: string): Shape {
   const column = identifier(name);
   const filled = (expression: string) => `coalesce(CAST(${expression} AS DOUBLE), 'nan'::DOUBLE)`;
+  if (/^(U?BIGINT|HUGEINT)$/.test(type)) {
+    const told = literal(
+      `column ${JSON.stringify(name)} holds whole numbers of more digits than a double holds; keep it as text with text: [${JSON.stringify(name)}]`,
+    );
+    const lost = `CAST(${column} AS HUGEINT) <> TRY_CAST(CAST(${column} AS DOUBLE) AS HUGEINT)`;
+    return {
+      name,
+      type,
+      kind: "number",
+      select: `CASE WHEN ${lost} THEN error(${told}) ELSE ${filled(column)} END`,
+    };
+  }
+  // Through text, a decimal becomes the double nearest to it, however many digits it has.
+  if (type.startsWith("DECIMAL")) {
+    return { name, type, kind: "number", select: filled(`CAST(${column} AS VARCHAR)`) };
+  }
   if (numeric.test(type)) return { name, type, kind: "number", select: filled(column) };
   if (type === "BOOLEAN")
     return { name, type, kind: "boolean", select: filled(`CAST(${column} AS INTEGER)`) };
   if (type === "DATE") {
     return { name, type, kind: "instant", select: filled(`epoch_ms(CAST(${column} AS TIMESTAMP))`) };
   }
-  if (type.startsWith("TIMESTAMP"))
-    return { name, type, kind: "instant", select: filled(milliseconds(column)) };
+  if (type.startsWith("TIMESTAMP")) {
+    return { name, type, kind: "instant", select: filled(milliseconds(name)) };
+  }
+  return asText(name, type);
+}
+
+function asText(name: string, type: string): Shape {
+  const column = identifier(name);
   return { name, type, kind: "text", select: type === "VARCHAR" ? column : `CAST(${column} AS VARCHAR)` };
 }
 
 /** Milliseconds of a time stamp; one that is finer than a millisecond stops the query. */
-function milliseconds(column: string): string {
-  const micro = `epoch_us(${column})`;
-  return `CASE WHEN ${micro} % 1000 <> 0 THEN error('a time is finer than a millisecond') ELSE epoch_ms(${column}) END`;
+function milliseconds(name: string): string {
+  const column = identifier(name);
+  const told = literal(`column ${JSON.stringify(name)} holds a time that is finer than a millisecond`);
+  return `CASE WHEN epoch_ns(${column}) % 1000000 <> 0 THEN error(${told}) ELSE epoch_ms(${column}) END`;
 }

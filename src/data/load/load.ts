@@ -5,9 +5,10 @@ import type { TimeTable } from "../table.js";
 import { readArrow } from "./arrow.js";
 import { loadQuery } from "./database.js";
 import { type OnRows, readDelimited } from "./delimited/delimited.js";
-import { collect, firstLine, literal, withDuckDB } from "./duckdb.js";
 import { fileFingerprint, requireFile } from "./file.js";
+import { readJson } from "./json.js";
 import type { LoadOptions } from "./options.js";
+import { readParquet } from "./parquet.js";
 import { placed, RowProblem } from "./problem.js";
 import type { RawColumn, RawTable } from "./raw-table.js";
 import { type Cell, fromRows } from "./rows.js";
@@ -89,21 +90,11 @@ const databases = [".duckdb", ".db", ".sqlite", ".sqlite3"];
 
 type Reader = (path: string, options: LoadOptions, onRows: OnRows) => Promise<RawColumn[]>;
 
-const byDuckDB =
-  (call: string): Reader =>
-  (path, _options, onRows) =>
-    withDuckDB((connection) => collect(connection, `SELECT * FROM ${call}(${literal(path)})`, onRows)).catch(
-      (error) => {
-        if (error instanceof InputError) throw error;
-        throw new InputError(`load: ${path} cannot be read: ${firstLine(error)}.`);
-      },
-    );
-
 const readers: Readonly<Record<string, Reader>> = {
-  ".parquet": byDuckDB("read_parquet"),
-  ".json": byDuckDB("read_json_auto"),
-  ".jsonl": byDuckDB("read_json_auto"),
-  ".ndjson": byDuckDB("read_json_auto"),
+  ".parquet": readParquet,
+  ".json": readJson,
+  ".jsonl": readJson,
+  ".ndjson": readJson,
   ".arrow": readArrow,
   ".feather": readArrow,
   ".ipc": readArrow,

@@ -58,19 +58,28 @@ function asColumn(column: RawColumn): Column {
   return column;
 }
 
-/** Texts that are all written like numbers are said, not turned into numbers. */
+const plain = /^\s*[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?\s*$/i;
+const withUnit = /^\s*\(?[€$£¥]?\s*[+-−]?\d[\d.,'’\s]*\s*[%€$£¥]?\)?\s*$/;
+
+/** Texts that are written like numbers are said, not turned into numbers. */
 function numbersInText(columns: readonly Column[], options: LoadOptions): Remark[] {
   return columns.flatMap((column): Remark[] => {
     if (column.kind !== "text" || options.text?.includes(column.name)) return [];
-    let some = false;
+    let [present, numbers, measures] = [0, 0, 0];
     for (const text of column.values) {
       if (text === null) continue;
-      if (!/^\s*[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?\s*$/i.test(text)) return [];
-      some = true;
+      present++;
+      if (plain.test(text)) numbers++;
+      else if (withUnit.test(text)) measures++;
     }
-    if (!some) return [];
+    if (numbers + measures === 0) return [];
     const name = JSON.stringify(column.name);
-    return [{ severity: "caution", text: `${name} is text, but every value is written like a number` }];
+    const example = JSON.stringify(column.values.find((text) => text !== null && withUnit.test(text)));
+    const text =
+      numbers + measures === present
+        ? `${name} is text, though every value is written like a number (${example}); make it one with .define`
+        : `${name} is text; ${numbers + measures} of its ${present} values are written like numbers (${example})`;
+    return [{ severity: numbers + measures === present ? "caution" : "note", text }];
   });
 }
 

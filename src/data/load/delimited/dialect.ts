@@ -3,7 +3,7 @@ import { open } from "node:fs/promises";
 import { InputError } from "../../../numeric/index.js";
 import { formOf } from "../../time/forms.js";
 import type { LoadOptions } from "../options.js";
-import { records } from "./records.js";
+import { type RawRecord, records } from "./records.js";
 import type { Encoding } from "./text-source.js";
 
 /** How a delimited file is written. */
@@ -40,7 +40,7 @@ export async function sniffDialect(
   // The last record of a cut text may be the start of one with a newline in quotes.
   if (!whole && rows[rows.length - 1]?.fault) rows.pop();
   const count = rows.length;
-  const header = options.names ?? rows.shift()?.fields;
+  const header = options.names ?? withoutEnd(rows.shift()?.fields, rows);
   if (!header) throw new InputError(`load: ${path} has no header and no rows.`);
   checkHeader(path, header, options);
   return {
@@ -52,6 +52,13 @@ export async function sniffDialect(
     rowBytes: Math.max(1, Math.min(bytes.length, size) / Math.max(1, count)),
     size,
   };
+}
+
+/** The header, less an empty last name when every line ends with a delimiter. */
+function withoutEnd(header: string[] | undefined, rows: readonly RawRecord[]): string[] | undefined {
+  if (!header || header.length < 2 || header[header.length - 1] !== "") return header;
+  const ended = rows.every(({ fields }) => fields.length < header.length || fields[header.length - 1] === "");
+  return ended ? header.slice(0, -1) : header;
 }
 
 async function readStart(path: string): Promise<{ bytes: Buffer; size: number }> {

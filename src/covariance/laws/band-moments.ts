@@ -1,8 +1,7 @@
-import { columnOf } from "../../numeric/index.js";
 import { type Kernel, lagWeights, lastLag } from "../kernels.js";
-import { dot } from "../shape/vectors.js";
-import type { ContrastDesign } from "./design.js";
-import { type Apply, lagOperator, toeplitzOperator } from "./toeplitz.js";
+import { dot, dotAt } from "../shape/vectors.js";
+import { type ContrastDesign, imagesOf } from "./design.js";
+import { type LagOperator, lagOperator, toeplitzOperator } from "./toeplitz.js";
 
 /** Above this many products the moments cost more than the eigenvalues they save. */
 const AFFORDABLE = 4_000_000;
@@ -16,26 +15,28 @@ const REACH = 3;
  *
  * KD²K is formed along its band: with A₀ = DKD, tr(A₀³) = Σ w_s²w_t² κ_{s−t} (KD²K)_{st} and tr(A₀⁴) = Σ w_s²w_t² (KD²K)²_{st}; the
  * projection is taken care of by the k×k matrices Q'A₀ⁿQ.
+ *
+ * @param images A₀Q.
  */
 export function higherMoments(
   design: ContrastDesign,
   kernel: Kernel,
   bandwidth: number,
+  images: Float64Array,
 ): { third: number; fourth: number } | undefined {
-  const { weights, basis } = design;
-  const n = weights.length;
+  const { squares, basis } = design;
+  const n = squares.length;
   if (kernel.name === "daniell") return undefined;
   const reach = kernel.finite ? lastLag(kernel, bandwidth, n) : Math.ceil(REACH * bandwidth);
   const last = Math.min(n - 1, reach);
   const boxes = kernel.name === "bartlett" && last > 12;
   if (n * (boxes ? 20 * last : 2 * last * last) > AFFORDABLE) return undefined;
   const row = lagWeights(kernel, bandwidth, last);
-  const squares = weights.map((w) => w * w);
   const raw = boxes ? boxBand(squares, bandwidth, last) : productBand(squares, row);
   let { third, fourth } = raw;
   if (basis.columns > 0) {
     const K = kernel.finite ? lagOperator(kernel, bandwidth, n) : toeplitzOperator(row, n);
-    const G = projected(design, K);
+    const G = projected(design, K, images);
     third += -3 * G.trace3 + 3 * G.trace21 - G.trace111;
     fourth += -4 * G.trace4 + 4 * G.trace31 + 2 * G.trace22 - 4 * G.trace211 + G.trace1111;
   }
@@ -53,13 +54,15 @@ function accumulate(
   const n = squares.length;
   const last = row.length - 1;
   const end = Math.min(2 * last, n - 1 - s);
+  const near = Math.min(last, end);
   let third = (squares[s]! * values[0]! * row[0]!) / 2;
   let fourth = (squares[s]! * values[0]! * values[0]!) / 2;
-  for (let d = 1; d <= end; d++) {
+  for (let d = 1; d <= near; d++) {
     const product = squares[s + d]! * values[d]!;
-    if (d <= last) third += product * row[d]!;
+    third += product * row[d]!;
     fourth += product * values[d]!;
   }
+  for (let d = near + 1; d <= end; d++) fourth += squares[s + d]! * values[d]! * values[d]!;
   sums.third += 2 * squares[s]! * third;
   sums.fourth += 2 * squares[s]! * fourth;
 }
@@ -69,7 +72,7 @@ function productBand(squares: Float64Array, row: Float64Array): { third: number;
   const n = squares.length;
   const last = row.length - 1;
   const width = 2 * last + 1;
-  const symmetric = Float64Array.from({ length: width }, (_, i) => row[Math.abs(i - last)]!);
+  const symmetric = mirrored(row);
   const padded = new Float64Array(n + 2 * last);
   padded.set(squares, last);
   const window = new Float64Array(width);
@@ -88,6 +91,12 @@ function productBand(squares: Float64Array, row: Float64Array): { third: number;
   return sums;
 }
 
+/** κ at lags −last to last. */
+function mirrored(row: Float64Array): Float64Array {
+  const last = row.length - 1;
+  return Float64Array.from({ length: 2 * last + 1 }, (_, i) => row[Math.abs(i - last)]!);
+}
+
 /** For Bartlett weights each row is two moving sums of a window, or four for a bandwidth that is not whole. */
 function boxBand(squares: Float64Array, bandwidth: number, last: number): { third: number; fourth: number } {
   const n = squares.length;
@@ -95,6 +104,7 @@ function boxBand(squares: Float64Array, bandwidth: number, last: number): { thir
   const whole = Math.floor(bandwidth);
   const above = (whole + 1) * (1 - whole / bandwidth);
   const row = Float64Array.from({ length: last + 1 }, (_, j) => 1 - j / bandwidth);
+  const symmetric = mirrored(row);
   const padded = new Float64Array(n + 2 * last);
   padded.set(squares, last);
   const window = new Float64Array(width);
@@ -103,7 +113,7 @@ function boxBand(squares: Float64Array, bandwidth: number, last: number): { thir
   const cumulated = new Float64Array(2 * width + whole + 4);
   for (let s = 0; s < n; s++) {
     if (squares[s] === 0) continue;
-    for (let i = 0; i < width; i++) window[i] = padded[s + i]! * row[Math.abs(i - last)]!;
+    for (let i = 0; i < width; i++) window[i] = padded[s + i]! * symmetric[i]!;
     values.fill(0);
     addBoxes(window, whole, (1 - above) / whole, cumulated, values);
     if (above > 0) addBoxes(window, whole + 1, above / (whole + 1), cumulated, values);
@@ -125,14 +135,16 @@ function addBoxes(
 ): void {
   const width = window.length;
   const middle = (width - 1) / 2;
-  const end = middle + width - 1 + length;
+  const end = width - 1 + length;
+  // sums[r] is the sum of the `length` entries of the window that end at middle + r.
   let running = 0;
-  for (let r = middle - length + 1; r < middle; r++) if (r >= 0 && r < width) running += window[r]!;
-  for (let r = middle; r < end; r++) {
-    if (r < width) running += window[r]!;
-    const out = r - length;
-    if (out >= middle - length + 1 && out >= 0 && out < width) running -= window[out]!;
-    sums[r - middle] = running;
+  for (let i = Math.max(0, middle - length + 1); i < middle; i++) running += window[i]!;
+  for (let r = 0; r < end; r++) {
+    const entering = middle + r;
+    const leaving = entering - length;
+    if (entering < width) running += window[entering]!;
+    if (r > 0 && leaving >= 0 && leaving < width) running -= window[leaving]!;
+    sums[r] = running;
   }
   running = 0;
   for (let r = 0; r < length - 1; r++) running += sums[r]!;
@@ -154,26 +166,14 @@ interface Projected {
   trace1111: number;
 }
 
-/** Traces of products of G_n = Q'A₀ⁿQ. */
-function projected({ weights, basis }: ContrastDesign, K: Apply): Projected {
-  const n = weights.length;
-  const k = basis.columns;
-  const held = new Float64Array(n);
-  const image = (x: Float64Array): Float64Array => {
-    const out = new Float64Array(n);
-    for (let t = 0; t < n; t++) held[t] = weights[t]! * x[t]!;
-    K(held, out);
-    for (let t = 0; t < n; t++) out[t]! *= weights[t]!;
-    return out;
-  };
-  const q = Array.from({ length: k }, (_, j) => columnOf(basis, j));
-  const once = q.map(image);
-  const twice = once.map(image);
-  const G1 = products(q, once);
-  const G2 = products(once, once);
-  const G3 = products(once, twice);
-  let trace4 = 0;
-  for (const y of twice) trace4 += dot(y, y);
+/** Traces of products of G_n = Q'A₀ⁿQ, given A₀Q. */
+function projected(design: ContrastDesign, K: LagOperator, once: Float64Array): Projected {
+  const { rows: n, columns: k, data: q } = design.basis;
+  const twice = imagesOf(design, K, once);
+  const G1 = products(q, once, n, k);
+  const G2 = products(once, once, n, k);
+  const G3 = products(once, twice, n, k);
+  const trace4 = dot(twice, twice);
   const G11 = square(G1, k);
   let trace3 = 0;
   for (let j = 0; j < k; j++) trace3 += G3[j * k + j]!;
@@ -189,11 +189,12 @@ function projected({ weights, basis }: ContrastDesign, K: Apply): Projected {
   };
 }
 
-function products(a: readonly Float64Array[], b: readonly Float64Array[]): Float64Array {
-  const k = a.length;
+/** a'b for k columns each of n entries, symmetric. */
+function products(a: Float64Array, b: Float64Array, n: number, k: number): Float64Array {
   const result = new Float64Array(k * k);
-  for (let j = 0; j < k; j++)
-    for (let i = 0; i <= j; i++) result[j * k + i] = result[i * k + j] = dot(a[i]!, b[j]!);
+  for (let j = 0; j < k; j++) {
+    for (let i = 0; i <= j; i++) result[j * k + i] = result[i * k + j] = dotAt(a, i * n, b, j * n, n);
+  }
   return result;
 }
 

@@ -1,14 +1,23 @@
 import type { JointLaw, ReferenceLaw } from "../../estimate/index.js";
 import { chiSquared, fisher, normal, studentT } from "../../numeric/index.js";
+import { lawOf } from "./form-law.js";
+
+const students = new Map<number, ReferenceLaw>();
 
 /** Student's t with ν degrees of freedom. */
 export function studentLaw(df: number): ReferenceLaw {
-  return {
-    name: `t(${df})`,
-    df,
-    twoSided: (t) => (Number.isNaN(t) ? Number.NaN : 2 * studentT.upper(Math.abs(t), df)),
-    critical: (level) => studentT.upperQuantile((1 - level) / 2, df),
-  };
+  let law = students.get(df);
+  if (!law) {
+    const { twoSided, critical } = lawOf(
+      `t(${df})`,
+      (t) => 2 * studentT.upper(t, df),
+      (alpha) => studentT.upperQuantile(alpha / 2, df),
+    );
+    law = { name: `t(${df})`, df, twoSided, critical };
+    if (students.size > 1000) students.clear();
+    students.set(df, law);
+  }
+  return law;
 }
 
 /** The standard normal. */

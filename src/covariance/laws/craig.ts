@@ -1,7 +1,7 @@
 import { gaussLegendre } from "../../numeric/index.js";
 import type { Spectrum } from "./spectrum.js";
 
-const NODES = 40;
+const NODES = 32;
 const nodes = gaussLegendre(NODES, 0, Math.PI / 2);
 
 /** 1/sin²φ and (2/π)·weight of the nodes φ in (0, π/2). */
@@ -16,7 +16,7 @@ export const craigNodes = {
  *
  *   (2/π) ∫₀^{π/2} Π_i (1 + c² λ_i / sin²φ)^(−1/2) dφ,
  *
- * by 40 Gauss–Legendre nodes. Equal λ_i = 1/ν give the t law with ν degrees of freedom to 1e-10; relative
+ * by 32 Gauss–Legendre nodes. Equal λ_i = 1/ν give the t law with ν degrees of freedom to 1e-10; relative
  * accuracy is kept far out, since every term is positive.
  */
 export function quadraticTail(c: number, { leading, rest }: Spectrum): number {

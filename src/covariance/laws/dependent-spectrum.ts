@@ -1,5 +1,7 @@
-import { type Matrix, matrix, symmetricEigen } from "../../numeric/index.js";
+import type { Matrix } from "../../numeric/index.js";
 import { craigNodes } from "./craig.js";
+import { tridiagonalEigenvalues } from "./tridiagonal.js";
+import { tridiagonalise } from "./tridiagonalise.js";
 
 /** Eigenvalues θ of B, squared coordinates ζ of L'w along them, and `count` further eigenvalues `rest`. */
 export interface DependentSpectrum {
@@ -17,16 +19,18 @@ export function diagonalised(
   trace: number,
   rank: number,
 ): DependentSpectrum {
-  const B = matrix(size, size);
+  const B = new Float64Array(size * size);
   for (let j = 0; j < size; j++) {
-    for (let i = 0; i < size; i++) B.data[j * size + i] = products.data[j * products.rows + i]!;
+    for (let i = 0; i < size; i++) B[j * size + i] = products.data[j * products.rows + i]!;
   }
-  const { values, vectors } = symmetricEigen(B);
-  const theta = values.map((value) => Math.max(0, value));
+  const { diagonal, side } = tridiagonalise(B, size);
   const zeta = new Float64Array(size);
+  zeta[0] = length;
+  tridiagonalEigenvalues(diagonal, side, zeta);
+  const theta = diagonal.map((value) => Math.max(0, value));
   let left = trace;
   for (let i = 0; i < size; i++) {
-    zeta[i] = (length * vectors.data[i * size]!) ** 2;
+    zeta[i]! *= zeta[i]!;
     left -= theta[i]!;
   }
   if (size >= rank || left <= 1e-12 * trace) return { theta, zeta, rest: 0, count: 0 };
@@ -36,7 +40,8 @@ export function diagonalised(
 
 /** The size of an eigenvalue beyond those found: half the smallest that the Krylov space has settled. */
 function typicalRest(theta: Float64Array, left: number): number {
-  const settled = theta[Math.floor(0.7 * (theta.length - 1))]!;
+  const sorted = Float64Array.from(theta).sort();
+  const settled = sorted[Math.ceil(0.3 * (sorted.length - 1))]!;
   return Math.max(Math.min(settled / 2, left), 1e-14);
 }
 

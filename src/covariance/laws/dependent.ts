@@ -1,12 +1,12 @@
-import { counterRandom, matrix } from "../../numeric/index.js";
+import { matrix } from "../../numeric/index.js";
 import type { Kernel } from "../kernels.js";
-import { addTimes, dot, scale } from "../shape/vectors.js";
+import { dot } from "../shape/vectors.js";
 import { type DependentSpectrum, diagonalised } from "./dependent-spectrum.js";
 import { traceUnder } from "./dependent-trace.js";
 import { type ContrastDesign, projectOut } from "./design.js";
-import { type Apply, lagOperator } from "./toeplitz.js";
-
-const SEED = 20_250_102;
+import { direction } from "./direction.js";
+import { Space } from "./space.js";
+import { type LagOperator, lagOperator } from "./toeplitz.js";
 
 /**
  * How a contrast's error and its HAC variance go together when the errors are N(0, Ω), Ω = LL': the eigenvalues of
@@ -20,68 +20,55 @@ export function dependentSpectrum(
   design: ContrastDesign,
   kernel: Kernel,
   bandwidth: number,
-  omega: Apply,
+  omega: LagOperator,
   steps: number,
 ): DependentSpectrum {
   const n = design.weights.length;
   const most = Math.min(steps, design.rank + 1);
   const form = projectedForm(design, kernel, bandwidth);
-  const vectors: Float64Array[] = [];
-  const images: Float64Array[] = [];
+  const space = new Space(n, most, omega);
   const products = matrix(most, most);
-
-  const admit = (x: Float64Array): number => {
-    const image = new Float64Array(n);
-    omega(x, image);
-    const square = dot(x, image);
-    if (!(square > 1e-26)) return 0;
-    const length = Math.sqrt(square);
-    scale(x, 1 / length);
-    scale(image, 1 / length);
-    vectors.push(x);
-    images.push(image);
-    return length;
-  };
-  /** Takes the space out of x; the parts taken are entries of column j of the projected B. */
-  const reduce = (x: Float64Array, j?: number): Float64Array => {
-    for (let i = 0; i < vectors.length; i++) {
-      const part = dot(images[i]!, x);
-      addTimes(x, -part, vectors[i]!);
-      if (j !== undefined) products.data[j * most + i] = products.data[i * most + j] = part;
-    }
-    return x;
-  };
+  const next = new Float64Array(n);
   let draws = 0;
-  const random = (): Float64Array => {
-    const x = new Float64Array(n);
-    counterRandom(SEED, draws++).fillNormal(x);
-    for (let t = 0; t < n; t++) if (design.weights[t] === 0) x[t] = 0;
-    projectOut(design.basis, x);
-    return reduce(x);
+  const admitRandom = (): void => {
+    next.set(direction(n, draws++));
+    for (let t = 0; t < n; t++) if (design.weights[t] === 0) next[t] = 0;
+    projectOut(design.basis, next);
+    const before = dot(next, next);
+    space.reduce(next);
+    if (space.independent(next, before)) space.admit(next);
   };
-
-  const length = admit(Float64Array.from(design.weights));
-  if (most > 1) admit(random());
-  for (let j = 0; j < vectors.length; j++) {
-    const out = new Float64Array(n);
-    form(images[j]!, out);
-    reduce(out, j);
-    if (vectors.length < most && admit(out) === 0 && vectors.length === j + 1) admit(random());
+  next.set(design.weights);
+  const length = space.admit(next);
+  if (most > 1) admitRandom();
+  let largest = 0;
+  for (let j = 0; j < space.count; j++) {
+    form(space.images, j * n, next);
+    const before = dot(next, next);
+    space.reduce(next, products, j);
+    if (space.count === most) continue;
+    if (before > largest) largest = before;
+    if (space.independent(next, largest)) space.admit(next);
+    else if (space.count === j + 1) admitRandom();
   }
   const trace = traceUnder(design, kernel, bandwidth, omega);
-  return diagonalised(products, vectors.length, length, trace, design.rank + 1);
+  return diagonalised(products, space.count, length, trace, design.rank + 1);
 }
 
 /** p → M D K D M p. */
-function projectedForm({ weights, basis }: ContrastDesign, kernel: Kernel, bandwidth: number): Apply {
+function projectedForm(
+  { weights, basis }: ContrastDesign,
+  kernel: Kernel,
+  bandwidth: number,
+): (p: Float64Array, from: number, out: Float64Array) => void {
   const n = weights.length;
   const K = lagOperator(kernel, bandwidth, n);
   const held = new Float64Array(n);
-  return (p, out) => {
-    held.set(p);
+  return (p, from, out) => {
+    for (let t = 0; t < n; t++) held[t] = p[from + t]!;
     projectOut(basis, held);
     for (let t = 0; t < n; t++) held[t]! *= weights[t]!;
-    K(held, out);
+    K(held, 0, out, 0);
     for (let t = 0; t < n; t++) out[t]! *= weights[t]!;
     projectOut(basis, out);
   };

@@ -1,10 +1,10 @@
-import { autocovariances, columnOf, type Matrix } from "../../numeric/index.js";
+import { autocovariances, type Matrix } from "../../numeric/index.js";
 import { type Kernel, lagWeights, lastLag } from "../kernels.js";
 import { influenceWeights, type Scores } from "../scores.js";
-import { addTimes, dot, scale } from "../shape/vectors.js";
+import { addTimesAt, dot, dotAt, scale } from "../shape/vectors.js";
 import { higherMoments } from "./band-moments.js";
 import type { Form } from "./krylov.js";
-import { lagOperator } from "./toeplitz.js";
+import { type LagOperator, lagOperator } from "./toeplitz.js";
 
 /** A contrast on a design, as the law of its t ratio sees it. */
 export interface ContrastDesign {
@@ -15,6 +15,8 @@ export interface ContrastDesign {
   /** Dimension that the residuals move in. */
   readonly rank: number;
   readonly places?: Int32Array;
+  /** w_t². */
+  readonly squares: Float64Array;
   /** Σ_t w_t² w_{t−j}² for every lag j. */
   readonly squareProducts: () => Float64Array;
 }
@@ -32,15 +34,14 @@ export function designOf(
   rank: number,
   places?: Int32Array,
 ): ContrastDesign {
+  const squares = new Float64Array(weights.length);
+  for (let t = 0; t < weights.length; t++) squares[t] = weights[t]! * weights[t]!;
   let products: Float64Array | undefined;
   const squareProducts = (): Float64Array => {
-    products ??= autocovariances(
-      weights.map((w) => w * w),
-      weights.length - 1,
-    );
+    products ??= autocovariances(squares, weights.length - 1);
     return products;
   };
-  return { weights, basis, rank, squareProducts, ...(places ? { places } : {}) };
+  return { weights, basis, rank, squares, squareProducts, ...(places ? { places } : {}) };
 }
 
 /**
@@ -54,13 +55,10 @@ export function hacForm(design: ContrastDesign, kernel: Kernel, bandwidth: numbe
   const K = lagOperator(kernel, bandwidth, n);
   const held = new Float64Array(n);
   const project = (x: Float64Array): void => projectOut(basis, x);
-  const raw = (x: Float64Array, out: Float64Array): void => {
-    for (let t = 0; t < n; t++) held[t] = weights[t]! * x[t]!;
-    K(held, out);
+  const apply = (x: Float64Array, from: number, out: Float64Array): void => {
+    for (let t = 0; t < n; t++) held[t] = weights[t]! * x[from + t]!;
+    K(held, 0, out, 0);
     for (let t = 0; t < n; t++) out[t]! *= weights[t]!;
-  };
-  const apply = (x: Float64Array, out: Float64Array): void => {
-    raw(x, out);
     project(out);
   };
   const last = lastLag(kernel, bandwidth, n);
@@ -70,28 +68,38 @@ export function hacForm(design: ContrastDesign, kernel: Kernel, bandwidth: numbe
   for (let j = 1; j <= last; j++) square += 2 * row[j]! ** 2 * products[j]!;
   // tr(MAM) = tr A − tr(Q'AQ); tr((MAM)²) = tr A² − 2 tr(Q'A²Q) + tr((Q'AQ)²).
   let trace = 1;
-  const image = new Float64Array(n);
+  const images = imagesOf(design, K, basis.data);
   for (let j = 0; j < k; j++) {
-    raw(columnOf(basis, j), image);
-    trace -= dot(columnOf(basis, j), image);
-    square -= 2 * dot(image, image);
-    for (let i = 0; i < k; i++) square += dot(columnOf(basis, i), image) ** 2;
+    trace -= dotAt(basis.data, j * n, images, j * n, n);
+    square -= 2 * dotAt(images, j * n, images, j * n, n);
+    for (let i = 0; i < k; i++) square += dotAt(basis.data, i * n, images, j * n, n) ** 2;
   }
-  const clean = places ? keepOnly(places, project) : project;
   const sums = {
     first: trace,
     second: Math.max(square, trace ** 2 / rank),
-    ...higherMoments(design, kernel, bandwidth),
+    ...higherMoments(design, kernel, bandwidth, images),
   };
-  return { size: n, rank, apply, project: clean, sums };
+  return { size: n, rank, apply, project: places ? keepOnly(places, project) : project, sums };
+}
+
+/** DKDx for k columns x that lie side by side. */
+export function imagesOf(design: ContrastDesign, K: LagOperator, columns: Float64Array): Float64Array {
+  const { weights, basis } = design;
+  const n = weights.length;
+  const k = basis.columns;
+  const products = new Float64Array(n * k);
+  const images = new Float64Array(n * k);
+  for (let j = 0; j < k; j++) {
+    for (let t = 0; t < n; t++) products[j * n + t] = weights[t]! * columns[j * n + t]!;
+  }
+  for (let j = 0; j < k; j += 2) K(products, j * n, images, j * n, j + 1 < k);
+  for (let j = 0; j < k; j++) for (let t = 0; t < n; t++) images[j * n + t]! *= weights[t]!;
+  return images;
 }
 
 /** x ← x − QQ'x. */
-export function projectOut(basis: Matrix, x: Float64Array): void {
-  for (let j = 0; j < basis.columns; j++) {
-    const q = columnOf(basis, j);
-    addTimes(x, -dot(q, x), q);
-  }
+export function projectOut({ rows: n, columns: k, data }: Matrix, x: Float64Array): void {
+  for (let j = 0; j < k; j++) addTimesAt(x, 0, -dotAt(data, j * n, x, 0, n), data, j * n, n);
 }
 
 function keepOnly(places: Int32Array, project: (x: Float64Array) => void): (x: Float64Array) => void {

@@ -1,5 +1,5 @@
 import { InputError } from "../../numeric/index.js";
-import { type Apply, toeplitzOperator } from "./toeplitz.js";
+import { type LagOperator, toeplitzOperator } from "./toeplitz.js";
 
 /** A stationary error process, scaled to variance one. */
 export interface ErrorProcess {
@@ -9,26 +9,30 @@ export interface ErrorProcess {
   readonly ma: readonly number[];
 }
 
-/** x → Ωx over n calendar periods, Ω the correlation matrix of the process. */
-export function correlationOperator(process: ErrorProcess, n: number): Apply {
+/** The correlation matrix Ω of the process over n calendar periods, as an operator. */
+export function correlationOperator(process: ErrorProcess, n: number): LagOperator {
   const { ar, ma } = process;
   if (ar.length === 1 && ma.length === 0) return ar1Operator(ar[0]!, n);
   return toeplitzOperator(autocorrelations(process, n), n);
 }
 
 /** (Ωx)_t = Σ ρ^|t−s| x_s, by one recursion forward and one backward. */
-function ar1Operator(rho: number, n: number): Apply {
-  return (x, out) => {
+function ar1Operator(rho: number, n: number): LagOperator {
+  const apply = (x: Float64Array, from: number, out: Float64Array, outFrom: number): void => {
     let carried = 0;
     for (let t = 0; t < n; t++) {
-      carried = rho * carried + x[t]!;
-      out[t] = carried;
+      carried = rho * carried + x[from + t]!;
+      out[outFrom + t] = carried;
     }
     carried = 0;
     for (let t = n - 1; t >= 0; t--) {
-      out[t]! += carried;
-      carried = rho * (carried + x[t]!);
+      out[outFrom + t]! += carried;
+      carried = rho * (carried + x[from + t]!);
     }
+  };
+  return (x, from, out, outFrom, two) => {
+    apply(x, from, out, outFrom);
+    if (two) apply(x, from + n, out, outFrom + n);
   };
 }
 

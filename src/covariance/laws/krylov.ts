@@ -1,7 +1,7 @@
-import { counterRandom } from "../../numeric/index.js";
-import { addTimes, dot, scale } from "../shape/vectors.js";
+import { dot, dotAt, scale } from "../shape/vectors.js";
+import { Basis } from "./basis.js";
+import { direction } from "./direction.js";
 import { bundles, type PowerSums, type Spectrum } from "./spectrum.js";
-import type { Apply } from "./toeplitz.js";
 import { tridiagonalEigenvalues } from "./tridiagonal.js";
 
 /** A positive semidefinite operator A on the complement of some columns, with exact traces of its powers. */
@@ -9,7 +9,8 @@ export interface Form {
   readonly size: number;
   /** Dimension of the space that A acts on. */
   readonly rank: number;
-  readonly apply: Apply;
+  /** Writes A x to `out` for the x that starts at `from`. */
+  readonly apply: (x: Float64Array, from: number, out: Float64Array) => void;
   /** Takes out of a vector, in place, what A does not act on. */
   readonly project: (x: Float64Array) => void;
   readonly sums: PowerSums;
@@ -28,43 +29,35 @@ const MOST = 200;
  */
 export function resolver(form: Form): Resolver {
   const { size } = form;
-  const basis: Float64Array[] = [];
+  const basis = new Basis(size);
   const diagonal: number[] = [];
   const side: number[] = [];
   const left = { ...form.sums };
-  let vector = start(form, basis, 0);
+  const next = new Float64Array(size);
+  let ready = start(form, basis, 0, next);
   let spectrum: Spectrum | undefined;
   return (c, error) => {
     let grown = false;
-    while (
-      vector &&
-      basis.length < MOST &&
-      !(basis.length >= least(size) && resolved(left, form, c, error))
-    ) {
+    while (ready && basis.count < MOST && !(basis.count >= least(size) && resolved(left, form, c, error))) {
       grown = true;
-      basis.push(vector);
-      const next = new Float64Array(size);
-      form.apply(vector, next);
-      const alpha = dot(vector, next);
+      const at = basis.add(next);
+      form.apply(basis.data, at, next);
+      const alpha = dotAt(basis.data, at, next, 0, size);
       diagonal.push(alpha);
       subtract(left, diagonal, side);
-      orthogonalise(next, basis);
+      basis.reduce(next);
       let beta = Math.sqrt(dot(next, next));
       if (beta < 1e-2 * alpha) {
         // Where most of the vector cancelled, rounding errors along the basis and outside the space are left.
         form.project(next);
-        orthogonalise(next, basis);
+        basis.reduce(next);
         beta = Math.sqrt(dot(next, next));
       }
       const coupled = beta > 1e-13 * form.sums.first;
       side.push(coupled ? beta : 0);
-      if (coupled) {
-        scale(next, 1 / beta);
-        vector = next;
-      } else {
-        // An invariant subspace: the other copies of repeated eigenvalues are in its complement.
-        vector = start(form, basis, basis.length);
-      }
+      if (coupled) scale(next, 1 / beta);
+      // An invariant subspace: the other copies of repeated eigenvalues are in its complement.
+      else ready = start(form, basis, basis.count, next);
     }
     if (grown || !spectrum) spectrum = assemble(form, diagonal, side);
     return spectrum;
@@ -80,7 +73,7 @@ function resolved(left: PowerSums, form: Form, c: number, error: number): boolea
   if (!(left.first > 1e-12 * form.sums.first) || left.second <= 0) return true;
   if (left.third !== undefined) {
     const largest = Math.max(...bundles(left).map(({ value }) => value));
-    return c * c * largest < 3 * error ** (1 / 4);
+    return c * c * largest < 3.2 * error ** (1 / 4);
   }
   return left.second ** 2 * c ** 6 < 12 * error * left.first;
 }
@@ -118,20 +111,15 @@ function assemble(form: Form, diagonal: number[], side: number[]): Spectrum {
   return { leading, rest: exhausted ? [] : bundles(left) };
 }
 
-/** A unit vector in the form's space, orthogonal to the basis; undefined when there is none left. */
-function start(form: Form, basis: readonly Float64Array[], replicate: number): Float64Array | undefined {
-  if (basis.length >= form.rank) return undefined;
-  const vector = new Float64Array(form.size);
-  counterRandom(20_250_101, replicate).fillNormal(vector);
-  form.project(vector);
-  orthogonalise(vector, basis);
-  orthogonalise(vector, basis);
-  const length = Math.sqrt(dot(vector, vector));
-  if (!(length > 1e-10)) return undefined;
-  scale(vector, 1 / length);
-  return vector;
-}
-
-function orthogonalise(x: Float64Array, basis: readonly Float64Array[]): void {
-  for (let i = basis.length - 1; i >= 0; i--) addTimes(x, -dot(x, basis[i]!), basis[i]!);
+/** Writes a unit vector in the form's space, orthogonal to the basis; false when there is none left. */
+function start(form: Form, basis: Basis, replicate: number, out: Float64Array): boolean {
+  if (basis.count >= form.rank) return false;
+  out.set(direction(form.size, replicate));
+  form.project(out);
+  basis.reduce(out);
+  basis.reduce(out);
+  const length = Math.sqrt(dot(out, out));
+  if (!(length > 1e-10)) return false;
+  scale(out, 1 / length);
+  return true;
 }

@@ -27,10 +27,7 @@ export interface Case {
       };
     };
     readonly newey_west_1994: Readonly<
-      Record<
-        string,
-        { pre_truncation_lag: number; s0: number; sq: number; gamma: number; bandwidth: number }
-      >
+      Record<string, { pre_truncation_lag: number; s0: number; sq: number; gamma: number; bandwidth: number }>
     >;
     readonly prewhitened: { readonly spectral_radius_A: number };
   };
@@ -51,7 +48,9 @@ export const loadCase = (name: string): Case => fixture<Case>(`reference/covaria
 
 /** The case's regression, from its design file. */
 export function caseRegression(name: string): Regression {
-  const lines = readFileSync(fixturePath(`reference/covariance/${name}.design.csv`), "utf8").trim().split("\n");
+  const lines = readFileSync(fixturePath(`reference/covariance/${name}.design.csv`), "utf8")
+    .trim()
+    .split("\n");
   const header = lines[0]!.split(",");
   const rows = lines.slice(1).map((line) => line.split(","));
   const column = (at: number): number[] => rows.map((row) => Number(row[at]));

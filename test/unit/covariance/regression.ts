@@ -27,7 +27,11 @@ export function regressionOf(
   const { rows: T, columns: k } = X;
   const Q = orthonormalBasis(X);
   const leverage = new Float64Array(T);
-  for (let j = 0; j < k; j++) columnOf(Q, j).forEach((q, t) => (leverage[t]! += q * q));
+  for (let j = 0; j < k; j++) {
+    columnOf(Q, j).forEach((q, t) => {
+      leverage[t]! += q * q;
+    });
+  }
   return {
     X,
     y: outcome,
@@ -72,7 +76,7 @@ export function autoregressive(T: number, rho: number, seed: number): Float64Arr
 
 /** An invented regression: an intercept and k − 1 regressors, errors and regressors with memory. */
 export function invented(T: number, k: number, seed: number, rho = 0.5): Regression {
-  const columns = [new Float64Array(T).fill(1)];
+  const columns: Float64Array[] = [new Float64Array(T).fill(1)];
   for (let j = 1; j < k; j++) columns.push(autoregressive(T, rho, 1000 * seed + j));
   const errors = autoregressive(T, rho, 1000 * seed);
   const y = errors.map((u, t) => u + 1 + 0.5 * (columns[1]?.[t] ?? 0));

@@ -56,7 +56,7 @@ export function htmlCard(card: Card): Html {
     (fact) => html`<span style="opacity:0.8"> · ${fact}</span>`,
   )}</div>${
     finding !== undefined && html`<div style="margin:0 0 0.5em 0;font-size:1.1em">${finding}</div>`
-  }${remarksHtml(remarks)}${parts.map(partHtml)}<div style="margin:0.5em 0 0 0;${small}">${footer(card).join(" · ")}</div></div>`;
+  }${remarksHtml(remarks)}${parts.filter((part) => part.html.markup !== "").map(partHtml)}<div style="margin:0.5em 0 0 0;${small}">${footer(card).join(" · ")}</div></div>`;
 }
 
 // Many remarks would push the figures out of sight: cautions first, and what is over is folded away.

@@ -1,36 +1,36 @@
-import type { LinePoints } from "./thin.js";
+import { type LinePoints, type Thinned, thin } from "./thin.js";
 
 /**
- * The points of a line over the rows of a time index: in order of time, and with a missing one wherever periods are absent,
- * which breaks the line there.
+ * A line over the rows of a time index, thinned to `bins` stretches: rows in order of time, broken wherever periods are
+ * absent.
  */
-export function withGaps(ordinals: ArrayLike<number>, values: ArrayLike<number>): LinePoints {
-  const x: number[] = [];
-  const y: number[] = [];
-  const order = inOrder(ordinals);
-  let before = Number.NaN;
-  for (let n = 0; n < ordinals.length; n++) {
-    const i = order ? order[n]! : n;
-    const at = ordinals[i]!;
-    if (at - before > 1) {
-      x.push(before + 1);
-      y.push(Number.NaN);
-    }
-    x.push(at);
-    y.push(values[i]!);
-    before = at;
+export function timeLine(ordinals: ArrayLike<number>, values: ArrayLike<number>, bins?: number): Thinned {
+  for (let i = 1; i < ordinals.length; i++) {
+    if (ordinals[i]! < ordinals[i - 1]!) return sorted(ordinals, values, bins);
   }
-  return { x, y };
+  const few = thin({ x: ordinals, y: values }, bins, 1);
+  return few.thinned ? few : { ...withGaps(few), from: few.from, thinned: false };
+}
+
+// A missing point wherever periods are absent.
+function withGaps({ x, y }: LinePoints): { x: Float64Array; y: Float64Array } {
+  const xs: number[] = [];
+  const ys: number[] = [];
+  for (let i = 0; i < x.length; i++) {
+    if (i > 0 && x[i]! - x[i - 1]! > 1) {
+      xs.push(x[i - 1]! + 1);
+      ys.push(Number.NaN);
+    }
+    xs.push(x[i]!);
+    ys.push(y[i]!);
+  }
+  return { x: Float64Array.from(xs), y: Float64Array.from(ys) };
 }
 
 // Rows out of order are the table's finding; a line of them is drawn all the same.
-function inOrder(ordinals: ArrayLike<number>): number[] | undefined {
-  for (let i = 1; i < ordinals.length; i++) {
-    if (ordinals[i]! < ordinals[i - 1]!) {
-      return Array.from({ length: ordinals.length }, (_, row) => row).sort(
-        (a, b) => ordinals[a]! - ordinals[b]!,
-      );
-    }
-  }
-  return undefined;
+function sorted(ordinals: ArrayLike<number>, values: ArrayLike<number>, bins?: number): Thinned {
+  const rows = Array.from({ length: ordinals.length }, (_, row) => row);
+  rows.sort((a, b) => ordinals[a]! - ordinals[b]!);
+  const [x, y] = [ordinals, values].map((column) => Float64Array.from(rows, (row) => column[row]!));
+  return timeLine(x!, y!, bins);
 }

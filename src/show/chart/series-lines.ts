@@ -2,9 +2,8 @@ import { periodLabel, type TimeIndex } from "../../data/index.js";
 import { count, number } from "../text/figures.js";
 import { name } from "../text/legible.js";
 import { colours } from "./colours.js";
-import { withGaps } from "./gaps.js";
+import { timeLine } from "./gaps.js";
 import { type ChartSource, tooltip } from "./spec.js";
-import { thin } from "./thin.js";
 import { timeScale } from "./time-axis.js";
 
 /** One series over the rows of an index. */
@@ -13,32 +12,36 @@ export interface Series {
   readonly values: ArrayLike<number>;
 }
 
+// Points of all series together up to which each can be pointed at; beyond, hidden points would outweigh the picture.
+const mostPoints = 3000;
+
 /** Several series below each other on one time axis, which zooms and moves for all at once. */
 export function seriesChart(title: string, index: TimeIndex, series: readonly Series[]): ChartSource {
   const time = timeScale(index.step);
   const { ordinals } = index;
   const values: object[] = [];
+  const bins = Math.max(120, Math.min(500, Math.floor(2000 / series.length)));
+  const all = ordinals.length * series.length;
+  const hover = all <= mostPoints;
   let thinned = 0;
   for (const [n, one] of series.entries()) {
-    const points = withGaps(ordinals, one.values);
-    const few = thin(points);
+    const few = timeLine(ordinals, one.values, bins);
     if (few.thinned) thinned = Math.max(thinned, few.from);
     for (let i = 0; i < few.x.length; i++) {
       const [ordinal, value] = [few.x[i]!, few.y[i]!];
       values.push({
         t: time.at(ordinal),
-        v: Number.isFinite(value) ? value : null,
+        v: Number.isFinite(value) ? drawn(value, few.thinned) : null,
         s: name(one.name),
         n,
-        p: periodLabel(index, ordinal),
-        f: number(value),
+        ...(hover ? { p: periodLabel(index, ordinal), f: number(value) } : {}),
       });
     }
   }
   const said = series.map(({ name: label, values: all }) => `${name(label)} ${rangeOf(all)}`);
   const less =
     thinned > 0
-      ? ` Drawn from first, lowest, highest and last of 500 stretches of ${count(thinned)} periods.`
+      ? ` Drawn from first, lowest, highest and last of ${bins} stretches of ${count(thinned)} periods.`
       : "";
   const height = series.length <= 2 ? 150 : series.length <= 5 ? 90 : 60;
   const x = time.encoding("t");
@@ -78,18 +81,27 @@ export function seriesChart(title: string, index: TimeIndex, series: readonly Se
               },
             },
           },
-          {
-            mark: { type: "point", size: 30, opacity: 0 },
-            encoding: {
-              x,
-              y: { field: "v", type: "quantitative", title: null, scale: { zero: false } },
-              tooltip: tooltip({ p: "period", s: "series", f: "value" }),
-            },
-          },
+          ...(hover
+            ? [
+                {
+                  mark: { type: "point", size: 30, opacity: 0 },
+                  encoding: {
+                    x,
+                    y: { field: "v", type: "quantitative", title: null, scale: { zero: false } },
+                    tooltip: tooltip({ p: "period", s: "series", f: "value" }),
+                  },
+                },
+              ]
+            : []),
         ],
       },
     },
   };
+}
+
+// Of a picture of aggregates six figures are more than the eye has, and each figure more weighs on the notebook.
+function drawn(value: number, thinned: boolean): number {
+  return thinned ? Number(value.toPrecision(6)) : value;
 }
 
 function rangeOf(values: ArrayLike<number>): string {

@@ -1,6 +1,5 @@
 import { colours, lineGrey } from "./colours.js";
-import { withGaps } from "./gaps.js";
-import { thin } from "./thin.js";
+import { timeLine } from "./gaps.js";
 
 const size = { width: 180, height: 28 };
 
@@ -11,10 +10,9 @@ export function spark(
   filled?: ArrayLike<number>,
 ): string {
   const { width, height } = size;
-  const { x, y } = withGaps(ordinals, values);
-  const few = thin({ x, y }, width / 2);
-  const from = x[0] ?? 0;
-  const span = (x[x.length - 1] ?? 1) - from || 1;
+  const few = timeLine(ordinals, values, width / 2);
+  const from = few.x[0] ?? 0;
+  const span = (few.x[few.x.length - 1] ?? 1) - from || 1;
   let [low, high] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
   for (const value of few.y) {
     if (!Number.isFinite(value)) continue;

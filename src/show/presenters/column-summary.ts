@@ -10,8 +10,18 @@ export interface ColumnSummary {
   readonly missing: number;
 }
 
-/** Looks a column through once. */
+const known = new WeakMap<Column, ColumnSummary>();
+
+/** Looks a column through, once for all time: columns do not change. */
 export function columnSummary(column: Column): ColumnSummary {
+  const before = known.get(column);
+  if (before) return before;
+  const made = summarise(column);
+  known.set(column, made);
+  return made;
+}
+
+function summarise(column: Column): ColumnSummary {
   const missing = countMissing(column);
   if (column.kind === "text") {
     const values = new Set(column.values);

@@ -14,6 +14,7 @@ import {
   type TableModel,
   words,
 } from "../table/model.js";
+import { plainTable } from "../table/plain.js";
 import { count, levelText, number, pValue, scaleFor, significant } from "../text/figures.js";
 import { type Html, html } from "../text/html.js";
 import { name } from "../text/legible.js";
@@ -150,8 +151,21 @@ function summaryPart(m: Covariances): Part {
   return { ...part, html: html`${part.html}${legend}` };
 }
 
-function coefficientPart(m: Covariances, row: Row, open: boolean): Part {
+// Pages stay light: beyond so many coefficients, the most sensitive first, the details are in the plain text and the record.
+const most = 12;
+
+function restPart(m: Covariances): Part {
+  const rest = m.coefficients.length - most;
+  const call = html`<code>covariances(m, { terms: [...] })</code>`;
+  return {
+    html: html`<div style="opacity:0.8">Estimator by estimator for the other ${rest} coefficients: ${call}, or <code>tableOf(covariances(m), "intervals")</code></div>`,
+    plain: "",
+  };
+}
+
+function coefficientPart(m: Covariances, row: Row, open: boolean, drawnToo: boolean): Part {
   const table = estimatorsTable(m, row);
+  if (!drawnToo) return { html: html``, plain: `${table.title}\n${plainTable(table)}` };
   const axis = axisFor(judged(row), 2);
   const cells = row.intervals.map(({ low, high }) =>
     drawInterval(axis, { estimate: row.estimate, low, high }, { height: "1.75em" }),
@@ -179,7 +193,11 @@ export const covariancesShowing: Showing<Covariances> = {
       headline: [`${count(m.estimators.length)} covariance estimators`, ...aboutFacts(m.about)],
       finding: m.finding,
       remarks: m.remarks,
-      parts: [summaryPart(m), ...m.coefficients.map((row) => coefficientPart(m, row, open.has(row)))],
+      parts: [
+        summaryPart(m),
+        ...m.coefficients.map((row, i) => coefficientPart(m, row, open.has(row), i < most)),
+        ...(m.coefficients.length > most ? [restPart(m)] : []),
+      ],
       ...aboutPrint(m.about),
     };
   },

@@ -25,7 +25,7 @@ export interface HtmlTableOptions {
 }
 
 const line = "1px solid rgba(128,128,128,0.35)";
-const base = "padding:0.2em 0.6em;line-height:1.45;vertical-align:middle;border:none";
+const base = "padding:0.2em 0.6em";
 const sides = { left: "text-align:left", right: "text-align:right", decimal: "text-align:right" };
 
 /**
@@ -76,7 +76,7 @@ export function htmlTable(table: TableModel, options: HtmlTableOptions = {}): Ht
   const caption =
     options.caption &&
     html`<caption style="caption-side:top;text-align:left;padding:0 0 0.2em 0;font-style:normal">${table.title}</caption>`;
-  return html`<div style="overflow-x:auto;max-width:100%"><table style="border-collapse:collapse;table-layout:auto;margin:0;width:auto;font-size:inherit;font-variant-numeric:tabular-nums;border:none">${caption}<thead style="border-bottom:${line};vertical-align:bottom"><tr style="background:none">${over}</tr>${
+  return html`<div style="overflow-x:auto;max-width:100%"><table style="border-collapse:collapse;table-layout:auto;margin:0;width:auto;font-size:inherit;font-variant-numeric:tabular-nums">${caption}<thead style="border-bottom:${line};vertical-align:bottom"><tr style="background:none">${over}</tr>${
     two && html`<tr style="background:none">${under}</tr>`
   }</thead><tbody>${rows}</tbody></table></div>`;
 }

@@ -85,11 +85,16 @@ export function scaleOf(x: number, digits: number): Scale {
   return { decimals: Math.max(0, decimals), exponent: 0 };
 }
 
+// As rounded, a number may gain a digit (9.99 to 10.0); the largest of all would be rounded beyond what there is.
+function rounded(x: number, digits: number): number {
+  const near = Number(x.toPrecision(digits));
+  return Number.isFinite(near) ? near : x;
+}
+
 /** A number that no standard error goes with, to `digits` significant digits, whole digits in full: `12.35`, `1,234,568`. */
 export function number(x: number, digits = 4): string {
   if (!Number.isFinite(x)) return written(x, { decimals: 0, exponent: 0 });
-  const rounded = Number(x.toPrecision(digits));
-  const scale = scaleOf(rounded, digits);
+  const scale = scaleOf(rounded(x, digits), digits);
   // 12.50 for an exact 12.5 claims nothing that 12.5 does not.
   let { decimals } = scale;
   const exact = (places: number) =>
@@ -101,7 +106,7 @@ export function number(x: number, digits = 4): string {
 /** A test statistic or ratio to `digits` significant digits, kept also where the last are zeros: `14.20`. */
 export function significant(x: number, digits = 4): string {
   if (!Number.isFinite(x)) return written(x, { decimals: 0, exponent: 0 });
-  return written(x, scaleOf(Number(x.toPrecision(digits)), digits));
+  return written(x, scaleOf(rounded(x, digits), digits));
 }
 
 /** A p-value: `0.031`, `< 0.001`, `> 0.999`. */

@@ -1,6 +1,6 @@
 import assert from "node:assert/strict";
 import { test } from "node:test";
-import { withGaps } from "../../../../src/show/chart/gaps.js";
+import { timeLine } from "../../../../src/show/chart/gaps.js";
 import { missingStrip } from "../../../../src/show/chart/missing-strip.js";
 import { spark } from "../../../../src/show/chart/spark.js";
 import { thin } from "../../../../src/show/chart/thin.js";
@@ -47,12 +47,23 @@ test("every stretch keeps its lowest and highest point", () => {
 });
 
 test("absent periods break a line, and rows out of order are put in order", () => {
-  const { x, y } = withGaps([0, 1, 5, 6], [1, 2, 3, 4]);
-  assert.deepEqual([...(x as number[])], [0, 1, 2, 5, 6]);
+  const { x, y } = timeLine([0, 1, 5, 6], [1, 2, 3, 4]);
+  assert.deepEqual([...x], [0, 1, 2, 5, 6]);
   assert.ok(Number.isNaN(y[2]!));
-  const sorted = withGaps([3, 1, 2], [30, 10, 20]);
-  assert.deepEqual([...(sorted.x as number[])], [1, 2, 3]);
-  assert.deepEqual([...(sorted.y as number[])], [10, 20, 30]);
+  const sorted = timeLine([3, 1, 2], [30, 10, 20]);
+  assert.deepEqual([...sorted.x], [1, 2, 3]);
+  assert.deepEqual([...sorted.y], [10, 20, 30]);
+});
+
+test("absent periods break a thinned line too", () => {
+  const n = 10_000;
+  const x = Float64Array.from({ length: n }, (_, i) => (i < 5000 ? i : i + 77));
+  const few = timeLine(x, x, 50);
+  assert.ok(few.thinned);
+  const hole = few.y.findIndex(Number.isNaN);
+  assert.ok(hole > 0);
+  assert.ok(few.x[hole - 1]! <= 4999 && few.x[hole + 1]! >= 5077);
+  assert.equal(few.y.filter(Number.isNaN).length, 1);
 });
 
 test("a small line breaks at missing values, shows lone points and marks filled ones", () => {

@@ -1,4 +1,5 @@
 import type { TopLevelSpec } from "vega-lite";
+import { slim } from "./slim.js";
 import { textWidth } from "./text-metrics.js";
 
 // Vega and Vega-Lite take 0.7 s to load: at the first chart, not at the start of the kernel.
@@ -28,7 +29,7 @@ async function draw(spec: TopLevelSpec): Promise<string> {
   textMetrics.width = (item, text) => measured(item, text);
   const view = new vega.View(vega.parse(compiled.spec), { renderer: "none", logger, loader });
   try {
-    return await view.toSVG();
+    return slim(await view.toSVG());
   } finally {
     view.finalize();
     textMetrics.width = estimate;

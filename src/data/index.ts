@@ -18,10 +18,12 @@ export { requireRegular } from "./regular.js";
 export { type Aggregate, first, last, max, mean, min, sum } from "./reshape/aggregates.js";
 export { type Row, rowsOf } from "./reshape/define.js";
 export { displaySymbol, type MimeBundle, presentWith, type Remark, Result } from "./result.js";
+export { type ColumnSummary, columnSummary, smallLine } from "./summary.js";
 export { type TableParts, type TableSource, TimeTable } from "./table.js";
 export { countedSteps, type Step, type StepUnit, seasonLength, stepName } from "./time/step.js";
 export {
   parsePeriod,
+  parsePeriodEnd,
   periodDate,
   periodLabel,
   periodLabels,

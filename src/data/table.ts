@@ -1,5 +1,5 @@
 import { InputError } from "../numeric/index.js";
-import { type Column, countFilled, countMissing } from "./column.js";
+import type { Column } from "./column.js";
 import { findingsOf, gapsOf } from "./findings.js";
 import { fingerprintOf } from "./fingerprint.js";
 import { suggestion } from "./nearest.js";
@@ -15,6 +15,7 @@ import { select } from "./reshape/select.js";
 import { sort } from "./reshape/sort.js";
 import { type Aggregates, type StepOptions, toStep } from "./reshape/to-step.js";
 import { type Remark, Result } from "./result.js";
+import { type ColumnSummary, columnSummary } from "./summary.js";
 import { type Step, stepName } from "./time/step.js";
 import { periodLabel, spanText, type TimeIndex } from "./time/time-index.js";
 
@@ -52,6 +53,8 @@ export class TimeTable extends Result {
   readonly T: number;
   readonly #byName: ReadonlyMap<string, Column>;
   #fingerprint: string | undefined;
+  #findings: readonly Remark[] | undefined;
+  #summaries: readonly ColumnSummary[] | undefined;
 
   constructor(parts: TableParts) {
     super();
@@ -76,7 +79,18 @@ export class TimeTable extends Result {
 
   /** What to know about the table: how it was read, gaps, missing values. */
   get findings(): readonly Remark[] {
-    return [...this.readingFindings, ...irregularities(this.index), ...findingsOf(this.index, this.columns)];
+    this.#findings ??= [
+      ...this.readingFindings,
+      ...irregularities(this.index),
+      ...findingsOf(this.index, this.columns),
+    ];
+    return this.#findings;
+  }
+
+  /** What each column holds: kind of value, range, what is missing where, what was filled. */
+  get summaries(): readonly ColumnSummary[] {
+    this.#summaries ??= this.columns.map((column) => columnSummary(column, this.index));
+    return this.#summaries;
   }
 
   /** SHA-256 over the canonical numbers and the time index (not the file's bytes). */
@@ -163,22 +177,23 @@ export class TimeTable extends Result {
   }
 
   override toJSON(): Record<string, unknown> {
+    const label = (ordinal: number) => periodLabel(this.index, ordinal);
     return {
       kind: this.kind,
       span: spanText(this.index),
       step: stepName(this.index.step),
       T: this.T,
       time: this.index.name,
-      gaps: gapsOf(this.index).map(({ first, last }) => [
-        periodLabel(this.index, first),
-        periodLabel(this.index, last),
-      ]),
-      columns: this.columns.map((column) => ({
-        name: column.name,
-        kind: column.kind,
-        missing: countMissing(column),
-        filled: countFilled(column),
-      })),
+      gaps: gapsOf(this.index).map(({ first, last }) => [label(first), label(last)]),
+      columns: this.columns.map((column, i) => {
+        const { stretches, ...summary } = this.summaries[i]!;
+        return {
+          ...summary,
+          kind: column.kind,
+          holds: summary.kind,
+          missingPeriods: stretches.slice(0, 100).map(({ first, last }) => [label(first), label(last)]),
+        };
+      }),
       findings: this.findings,
       provenance: this.provenance,
       source: this.source,

@@ -1,6 +1,7 @@
 import {
   countedSteps,
   parsePeriod,
+  parsePeriodEnd,
   periodLabel,
   type Remark,
   requireRegular,
@@ -127,7 +128,7 @@ function sampleRows(table: TimeTable, sample: DesignOptions["sample"]): number[]
   const { ordinals } = table.index;
   const [from, to] = sample ?? [null, null];
   const first = from === null ? Number.NEGATIVE_INFINITY : parsePeriod(table.index, from);
-  const last = to === null ? Number.POSITIVE_INFINITY : parsePeriod(table.index, to);
+  const last = to === null ? Number.POSITIVE_INFINITY : parsePeriodEnd(table.index, to);
   const rows: number[] = [];
   for (let row = 0; row < table.T; row++)
     if (ordinals[row]! >= first && ordinals[row]! <= last) rows.push(row);

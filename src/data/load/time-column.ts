@@ -1,6 +1,6 @@
 import { InputError } from "../../numeric/index.js";
 import type { Remark } from "../result.js";
-import { isClockUnit, ordinalOfInstant } from "../time/calendar.js";
+import { isClockUnit, ordinalOfInstant, startOfPeriod } from "../time/calendar.js";
 import { instantOfWall, type WrittenForm } from "../time/forms.js";
 import { inferStep, parseStep } from "../time/infer.js";
 import { type Step, stepName } from "../time/step.js";
@@ -153,6 +153,10 @@ function takenForGranted(step: Step, times: Times, options: LoadOptions): Remark
   if (dated && step.unit !== "day" && step.unit !== "business-day" && step.unit !== "week") {
     const dates = new Set(Array.from(times.walls.subarray(0, 1000), (wall) => new Date(wall).getUTCDate()));
     if (!(dates.size === 1 && dates.has(1))) say(`each date stands for the ${step.unit} that it falls in`);
+  }
+  if (isClockUnit(step.unit)) {
+    const inside = times.instants.find((at) => startOfPeriod(step, ordinalOfInstant(step, at)) !== at);
+    if (inside !== undefined) say(`each time stands for the ${stepName(step)} that it falls in`);
   }
   if (times.form === "date-time" && !times.offset && !options.zone) {
     say("times carry no offset and were read as UTC");

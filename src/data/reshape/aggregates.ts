@@ -21,7 +21,7 @@ export const last: Aggregate = named("last", (values) => values[values.length - 
 export const first: Aggregate = named("first", (values) => values[0]!);
 
 /** The largest value; missing when any value is. */
-export const max: Aggregate = named("max", (values) => Math.max(...values));
+export const max: Aggregate = named("max", (values) => values.reduce((a, b) => Math.max(a, b)));
 
 /** The smallest value; missing when any value is. */
-export const min: Aggregate = named("min", (values) => Math.min(...values));
+export const min: Aggregate = named("min", (values) => values.reduce((a, b) => Math.min(a, b)));

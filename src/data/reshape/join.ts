@@ -2,7 +2,7 @@ import { InputError } from "../../numeric/index.js";
 import type { Column } from "../column.js";
 import { requireRegular } from "../regular.js";
 import type { TimeTable } from "../table.js";
-import { ordinalOfInstant, startOfPeriod } from "../time/calendar.js";
+import { coarsePeriodOf, meanLength } from "../time/nesting.js";
 import { stepName } from "../time/step.js";
 import { spanText } from "../time/time-index.js";
 import { derive, takeRows } from "./derive.js";
@@ -30,8 +30,7 @@ export function join(table: TimeTable, other: TimeTable, options: JoinOptions = 
     );
   }
   const integers = [table, other].filter(({ index }) => index.step.unit === "integer").length;
-  const finest = (t: TimeTable) => startOfPeriod(t.index.step, 400) - startOfPeriod(t.index.step, 0);
-  if (integers === 1 || finest(other) < finest(table)) {
+  if (integers === 1 || (integers === 0 && meanLength(other.index.step) < meanLength(table.index.step))) {
     throw new InputError(
       `join: the other table's step (${stepName(other.index.step)}) is finer than, or of another kind from, this ` +
         `table's (${stepName(table.index.step)}); bring it to one step first with .to("${stepName(table.index.step)}", { ... }).`,
@@ -39,8 +38,8 @@ export function join(table: TimeTable, other: TimeTable, options: JoinOptions = 
   }
   const place = new Map(Array.from(other.index.ordinals, (ordinal, row) => [ordinal, row]));
   const matches = Int32Array.from(table.index.ordinals, (ordinal) => {
-    const coarse = ordinalOfInstant(other.index.step, startOfPeriod(table.index.step, ordinal));
-    return place.get(coarse) ?? -1;
+    const coarse = coarsePeriodOf(table.index, other.index.step, ordinal);
+    return coarse === undefined ? -1 : (place.get(coarse) ?? -1);
   });
   const unmatched = matches.reduce((count, row) => count + (row < 0 ? 1 : 0), 0);
   if (unmatched === table.T) {

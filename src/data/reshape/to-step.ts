@@ -2,8 +2,8 @@ import { InputError } from "../../numeric/index.js";
 import type { Column } from "../column.js";
 import { requireRegular } from "../regular.js";
 import type { TimeTable } from "../table.js";
-import { ordinalOfInstant, startOfPeriod } from "../time/calendar.js";
 import { parseStep } from "../time/infer.js";
+import { coarsePeriodOf, finePeriodsIn, meanLength } from "../time/nesting.js";
 import { type Step, stepName } from "../time/step.js";
 import { periodLabel } from "../time/time-index.js";
 import type { Aggregate } from "./aggregates.js";
@@ -31,23 +31,22 @@ export function toStep(
   if (index.step.unit === "integer" || step.unit === "integer") {
     throw new InputError("to: whole-number periods have no calendar to aggregate by.");
   }
+  if (meanLength(step) <= meanLength(index.step) || step.unit === "business-day") {
+    throw new InputError(
+      `to: ${stepName(step)} is not coarser than this table's step, ${stepName(index.step)}.`,
+    );
+  }
   const groups = new Map<number, number[]>();
   index.ordinals.forEach((ordinal, row) => {
-    const coarse = ordinalOfInstant(step, startOfPeriod(index.step, ordinal));
+    const coarse = coarsePeriodOf(index, step, ordinal)!;
     const list = groups.get(coarse);
     if (list) list.push(row);
     else groups.set(coarse, [row]);
   });
   const axis = { step };
-  const coarser = averageLength(step) > averageLength(index.step);
-  if (!coarser) {
-    throw new InputError(
-      `to: ${stepName(step)} is not coarser than this table's step, ${stepName(index.step)}.`,
-    );
-  }
   let left = 0;
   for (const [coarse, rows] of groups) {
-    const expected = finePeriods(index.step, step, coarse);
+    const expected = finePeriodsIn(index, step, coarse);
     if (rows.length === expected || options.parts === true) continue;
     if (options.parts !== "leave out") {
       throw new InputError(
@@ -61,13 +60,15 @@ export function toStep(
   const coarse = [...groups.keys()].sort((a, b) => a - b);
   if (coarse.length === 0) throw new InputError(`to: no ${stepName(step)} is fully covered.`);
   const columns = Object.entries(aggregates).map(([name, aggregate]) =>
-    aggregated(table, name, aggregate, coarse, groups),
+    aggregated(table, name, aggregate, coarse, groups, axis),
   );
   const ways = Object.entries(aggregates).map(
     ([name, aggregate]) => `${name} by ${aggregate.name || "own function"}`,
   );
   const dropped = table.names.filter((name) => !(name in aggregates));
+  const straddles = step.unit !== "week" && (index.step.unit === "week" || index.step.count > 1);
   const notes = [
+    straddles ? `each ${stepName(index.step)} counts to the ${stepName(step)} in which it starts` : "",
     dropped.length > 0 ? `left out: ${dropped.join(", ")}` : "",
     left > 0 ? `${left} part periods left out` : "",
     options.parts === true ? "part periods aggregated as they are" : "",
@@ -83,31 +84,23 @@ export function toStep(
   });
 }
 
-function averageLength(step: Step): number {
-  return (startOfPeriod(step, 400) - startOfPeriod(step, 0)) / 400;
-}
-
-/** How many fine periods start within one coarse period. */
-function finePeriods(fine: Step, coarse: Step, ordinal: number): number {
-  const at = (instant: number) => {
-    const inside = ordinalOfInstant(fine, instant);
-    return startOfPeriod(fine, inside) === instant ? inside : inside + 1;
-  };
-  return at(startOfPeriod(coarse, ordinal + 1)) - at(startOfPeriod(coarse, ordinal));
-}
-
 function aggregated(
   table: TimeTable,
   name: string,
   aggregate: Aggregate,
   coarse: readonly number[],
   groups: ReadonlyMap<number, number[]>,
+  axis: { readonly step: Step },
 ): Column {
   const values = table.numbers(name);
   const { filled } = table.column(name);
-  const result = Float64Array.from(coarse, (ordinal) =>
-    aggregate(Float64Array.from(groups.get(ordinal)!, (row) => values[row]!)),
-  );
+  const result = Float64Array.from(coarse, (ordinal) => {
+    const value = aggregate(Float64Array.from(groups.get(ordinal)!, (row) => values[row]!));
+    if (typeof value === "number" && Math.abs(value) !== Number.POSITIVE_INFINITY) return value;
+    throw new InputError(
+      `to: the function for ${JSON.stringify(name)} gives ${String(value)} in ${periodLabel(axis, ordinal)}, which is no finite number.`,
+    );
+  });
   if (!filled) return { name, kind: "number", values: result };
   const flags = Uint8Array.from(coarse, (ordinal) =>
     groups.get(ordinal)!.some((row) => filled[row]) ? 1 : 0,

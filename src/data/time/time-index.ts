@@ -1,7 +1,7 @@
 import { InputError } from "../../numeric/index.js";
 import { isClockUnit, isoWeek, mod, ordinalOfInstant, startOfPeriod, unitsOf } from "./calendar.js";
 import { readInstant } from "./forms.js";
-import { type Step, seasonLength, stepName } from "./step.js";
+import { type Step, type StepUnit, seasonLength, stepName } from "./step.js";
 import { zoneClock } from "./zone.js";
 
 /** The time axis of a table: which period each row stands for. */
@@ -93,6 +93,27 @@ export function parsePeriod(axis: Axis, text: string | number): number {
     );
   }
   return ordinalOfInstant(step, isClockUnit(step.unit) ? read.milliseconds : read.wall);
+}
+
+/**
+ * The last ordinal of the period written in `text`: of 2021 on a monthly axis, December. Like `parsePeriod` where the
+ * text names no period longer than the step.
+ */
+export function parsePeriodEnd(axis: Axis, text: string | number): number {
+  const { step, zone } = axis;
+  const ordinal = parsePeriod(axis, text);
+  if (step.unit === "integer") return ordinal;
+  const read = readInstant(String(text), { zone });
+  if ("problem" in read || read.form === "date-time" || read.form === "integer") return ordinal;
+  const isDay = read.form === "date" || read.form === "day-month" || read.form === "month-day";
+  const named: Step = { unit: isDay ? "day" : (read.form as StepUnit), count: 1 };
+  const end = startOfPeriod(named, ordinalOfInstant(named, read.wall) + 1);
+  const instant = zone && isClockUnit(step.unit) ? (zoneClock(zone).instantsOf(end)[0] ?? end) : end;
+  if (step.unit === "business-day") {
+    const weekday = new Date(instant - 1).getUTCDay();
+    if (weekday === 0 || weekday === 6) return ordinalOfInstant(step, instant - 1) - 1; // of a weekend: its Friday
+  }
+  return Math.max(ordinal, ordinalOfInstant(step, instant - 1));
 }
 
 /**

@@ -1,4 +1,12 @@
-import { parsePeriod, periodLabel, type Step, seasonLength, seasonOf, stepName } from "../../data/index.js";
+import {
+  parsePeriod,
+  parsePeriodEnd,
+  periodLabel,
+  type Step,
+  seasonLength,
+  seasonOf,
+  stepName,
+} from "../../data/index.js";
 import { InputError } from "../../numeric/index.js";
 import { makeTerm, type Term, type TermColumn } from "../term.js";
 
@@ -163,9 +171,9 @@ function dated(
   });
 }
 
-function parseFor(asked: string, axis: Axis, at: string | number): number {
+function parseFor(asked: string, axis: Axis, at: string | number, parse = parsePeriod): number {
   try {
-    return parsePeriod(axis, at);
+    return parse(axis, at);
   } catch (error) {
     throw new InputError(`${asked}: ${(error as Error).message}.`);
   }
@@ -205,7 +213,7 @@ export function ramp(at: string | number): Term {
 export function between(from: string | number, to: string | number): Term {
   return makeTerm(`${from} to ${to}`, ({ index }) => {
     const first = parseFor("between", index, from);
-    const last = parseFor("between", index, to);
+    const last = parseFor("between", index, to, parsePeriodEnd);
     if (last < first) throw new InputError(`between: ${to} comes before ${from}.`);
     const label = `${periodLabel(index, first)} to ${periodLabel(index, last)}`;
     const values = index.ordinals.map((present) => (present >= first && present <= last ? 1 : 0));

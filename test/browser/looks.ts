@@ -77,7 +77,7 @@ export function faintText(page: Page, within: string, ratio: number): Promise<st
         return 0.2126 * linear[0]! + 0.7152 * linear[1]! + 0.0722 * linear[2]!;
       };
       const found: string[] = [];
-      for (const top of document.querySelectorAll(selector)) {
+      for (const top of Array.from(document.querySelectorAll(selector))) {
         const walker = document.createTreeWalker(top, NodeFilter.SHOW_TEXT);
         for (let node = walker.nextNode(); node && found.length < 10; node = walker.nextNode()) {
           const text = node.textContent!.trim();
@@ -106,8 +106,8 @@ export function faintText(page: Page, within: string, ratio: number): Promise<st
 export function cutOff(page: Page, within: string): Promise<string[]> {
   return page.evaluate((selector) => {
     const found: string[] = [];
-    for (const top of document.querySelectorAll(selector)) {
-      for (const element of top.querySelectorAll("table, td, p, img, svg, canvas, summary")) {
+    for (const top of Array.from(document.querySelectorAll(selector))) {
+      for (const element of Array.from(top.querySelectorAll("table, td, p, img, svg, canvas, summary"))) {
         const edge = element.getBoundingClientRect().right;
         let reachable = false;
         for (let at: Element | null = element.parentElement; at; at = at.parentElement) {

@@ -1,5 +1,5 @@
 // The cell functions, and nothing else.
-import { neweyWest } from "./covariance/index.js";
+import { defaultEstimator } from "./covariance/index.js";
 import type { TimeTable } from "./data/index.js";
 import type { TermLike } from "./design/index.js";
 import { spuriousAlarm } from "./diagnose/index.js";
@@ -18,7 +18,7 @@ export function fit(
   terms: TermLike | readonly TermLike[],
   options: FitOptions = {},
 ): Fit {
-  return estimate(table, outcome, terms, options, neweyWest(), [
+  return estimate(table, outcome, terms, options, defaultEstimator(), [
     (regression) => spuriousAlarm(regression)?.remark,
   ]);
 }

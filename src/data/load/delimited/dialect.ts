@@ -4,7 +4,7 @@ import { InputError } from "../../../numeric/index.js";
 import { formOf } from "../../time/forms.js";
 import type { LoadOptions } from "../options.js";
 import { type RawRecord, records } from "./records.js";
-import type { Encoding } from "./text-source.js";
+import { Decoder, type Encoding } from "./text-source.js";
 
 /** How a delimited file is written. */
 export interface Dialect {
@@ -33,9 +33,9 @@ export async function sniffDialect(
   if (size === 0) throw new InputError(`load: ${path} is empty.`);
   const whole = bytes.length >= size;
   const written = encoding ?? encodingOf(bytes, whole);
-  let text = withoutLines(new TextDecoder(written).decode(bytes), options.skip ?? 0);
+  let text = withoutLines(new Decoder(written).piece(bytes), options.skip ?? 0);
   if (!whole) text = text.slice(0, Math.max(text.lastIndexOf("\n") + 1, 1));
-  const delimiter = options.delimiter ?? guessDelimiter(text);
+  const delimiter = options.delimiter ?? guessDelimiter(text, options.time);
   const rows = [...records(text, delimiter)];
   // The last record of a cut text may be the start of one with a newline in quotes.
   if (!whole && rows[rows.length - 1]?.fault) rows.pop();
@@ -87,21 +87,23 @@ function withoutLines(text: string, count: number): string {
 }
 
 /**
- * The one of , ; tab | that parts the most records into one number of fields; failing that, the one that parts the
- * header most often.
+ * The one of , ; tab | that parts the most records into one number of fields, the time column among them; failing
+ * that, the one that parts the header most often.
  */
-function guessDelimiter(text: string): string {
+function guessDelimiter(text: string, time: string): string {
   const head = text.slice(0, 65_536);
   const found = [",", ";", "\t", "|"].map((delimiter) => {
     const counts: number[] = [];
-    for (const { fields } of records(head, delimiter)) if (counts.push(fields.length) >= 100) break;
-    const first = counts[0] ?? 0;
-    const alike = counts.filter((count) => count === first).length / Math.max(1, counts.length);
-    return { delimiter, count: first, even: first > 1 && alike >= 0.9 };
+    let named = false;
+    for (const { fields } of records(head, delimiter)) {
+      if (counts.length === 0) named = fields.includes(time);
+      if (counts.push(fields.length) >= 100) break;
+    }
+    const count = counts[0] ?? 0;
+    const alike = counts.filter((other) => other === count).length / Math.max(1, counts.length);
+    return { delimiter, rank: (count > 1 && alike >= 0.9 ? 2e6 : 0) + (named ? 1e6 : 0) + count };
   });
-  const even = found.filter((candidate) => candidate.even);
-  const best = (even.length > 0 ? even : found).reduce((a, b) => (b.count > a.count ? b : a));
-  return best.delimiter;
+  return found.reduce((best, candidate) => (candidate.rank > best.rank ? candidate : best)).delimiter;
 }
 
 function checkHeader(path: string, header: readonly string[], options: LoadOptions): void {

@@ -1,8 +1,9 @@
 import type { TimeTable } from "../data/index.js";
 import { type DesignOptions, design, type TermLike } from "../design/index.js";
+import { requireLevel } from "./coefficients.js";
 import type { CovarianceEstimator } from "./covariance-estimator.js";
 import { type ErrorModel, requireErrorModel } from "./errors.js";
-import { Fit, type FitParts, requireLevel } from "./fit.js";
+import { Fit, type FitParts } from "./fit.js";
 import { regress } from "./regress.js";
 
 /** Options of `fit`. */

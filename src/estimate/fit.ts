@@ -1,21 +1,10 @@
 import { periodLabel, type Remark, Result, spanText, suggestion, type TimeTable } from "../data/index.js";
 import type { Design } from "../design/index.js";
 import { InputError, norm } from "../numeric/index.js";
+import { type Coefficient, judgedCoefficients, requireLevel } from "./coefficients.js";
 import type { Covariance, CovarianceEstimator } from "./covariance-estimator.js";
+import { fitRecord } from "./fit-record.js";
 import type { LeastSquaresFit } from "./regress.js";
-
-/** One coefficient under the covariance estimator that is on. NaN where the estimator can give no interval. */
-export interface Coefficient {
-  readonly term: string;
-  readonly estimate: number;
-  readonly se: number;
-  /** estimate / se. */
-  readonly statistic: number;
-  readonly low: number;
-  readonly high: number;
-  /** Two-sided, under the estimator's reference law. */
-  readonly p: number;
-}
 
 /** What a fit was asked to be, as JSON. */
 export interface Specification {
@@ -146,7 +135,11 @@ export class Fit extends Result {
 
   /** All coefficients, in the order of `terms`. */
   get coefficients(): readonly Coefficient[] {
-    this.#coefficients ??= this.#computeCoefficients();
+    this.#coefficients ??= judgedCoefficients(
+      this.regression,
+      this.perfect ? undefined : this.covariance,
+      this.level,
+    );
     return this.#coefficients;
   }
 
@@ -215,48 +208,12 @@ export class Fit extends Result {
   }
 
   override toJSON(): Record<string, unknown> {
-    const number = (value: number) => (Number.isFinite(value) ? value : null);
-    return {
-      kind: this.kind,
-      specification: this.specification,
-      T: this.T,
-      k: this.k,
-      level: this.level,
-      estimator: { kind: this.estimator.kind, options: this.estimator.options, ...this.#estimatorFacts() },
-      coefficients: this.coefficients.map((row) => ({
-        term: row.term,
-        estimate: row.estimate,
-        se: number(row.se),
-        statistic: number(row.statistic),
-        low: number(row.low),
-        high: number(row.high),
-        p: number(row.p),
-      })),
-      rss: this.rss,
-      s2: number(this.s2),
-      rSquared: { value: number(this.rSquared.value), about: this.rSquared.about },
-      logLikelihood: number(this.logLikelihood),
-      aic: number(this.aic),
-      bic: number(this.bic),
-      condition: number(this.regression.condition),
-      left: this.design.left.map(({ ordinal, reason }) => ({
-        period: periodLabel(this.design.index, ordinal),
-        reason,
-      })),
-      remarks: this.remarks,
-      provenance: this.table.provenance,
-      fingerprint: this.fingerprint,
-    };
+    return fitRecord(this);
   }
 
   #parts(): FitParts {
     const { table, design, regression, estimator, level } = this;
     return { table, design, regression, estimator, level, watch: this.#watch };
-  }
-
-  #estimatorFacts(): Record<string, unknown> {
-    if (this.perfect) return { label: this.estimator.label };
-    return { label: this.covariance.label, details: this.covariance.details };
   }
 
   #hasConstant(): boolean {
@@ -271,46 +228,4 @@ export class Fit extends Result {
     }
     return Math.abs(T - projected) < 1e-12 * T;
   }
-
-  #computeCoefficients(): Coefficient[] {
-    const { coefficients, k, terms } = this.regression;
-    if (this.perfect) {
-      const none = {
-        se: Number.NaN,
-        statistic: Number.NaN,
-        low: Number.NaN,
-        high: Number.NaN,
-        p: Number.NaN,
-      };
-      return terms.map((term, j) => ({ term, estimate: coefficients[j]!, ...none }));
-    }
-    const { covariance } = this;
-    return terms.map((term, j): Coefficient => {
-      const estimate = coefficients[j]!;
-      const variance = covariance.matrix.data[j * k + j]!;
-      const se = variance > 0 ? Math.sqrt(variance) : Number.NaN;
-      const contrast = new Float64Array(k);
-      contrast[j] = 1;
-      if (Number.isNaN(se)) return { term, estimate, se, statistic: se, low: se, high: se, p: se };
-      const law = covariance.reference(contrast);
-      const reach = law.critical(this.level) * se;
-      const statistic = estimate / se;
-      return {
-        term,
-        estimate,
-        se,
-        statistic,
-        low: estimate - reach,
-        high: estimate + reach,
-        p: law.twoSided(statistic),
-      };
-    });
-  }
-}
-
-/** Refuses a level that is no probability between 0 and 1. */
-export function requireLevel(level: number): void {
-  if (level > 0 && level < 1) return;
-  const hint = level >= 50 && level < 100 ? ` Did you mean ${level / 100}?` : "";
-  throw new InputError(`the level of intervals must lie between 0 and 1, not ${level}.${hint}`);
 }

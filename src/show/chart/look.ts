@@ -136,7 +136,7 @@ export function lookChart(look: Look): ChartSource {
     lines(look, height),
     correlations(look, "lag, autocorrelation", (n) => series[n]!.autocorrelation, height),
     ...(series.length > 1
-      ? [correlations(look, `lag behind ${first}`, (n) => series[n]!.withFirst ?? [], height)]
+      ? [correlations(look, "lag behind the first", (n) => series[n]!.withFirst ?? [], height)]
       : []),
   ];
   const said = series.map(({ name: label, autocorrelation, withFirst }) => {

@@ -12,7 +12,11 @@ export async function chartPart(source: ChartSource, folded?: string): Promise<P
   const drawn: string[] = [];
   for (const spec of pictures(source)) drawn.push(await drawSvg(spec));
   const images = drawn.map((svg, i) =>
-    image(svg, i === 0 ? source.description : "", `min-width:${narrowest(svg)}px`),
+    image(
+      svg,
+      i === 0 ? source.description : `${source.title}, picture ${i + 1} of ${drawn.length}`,
+      `min-width:${narrowest(svg)}px`,
+    ),
   );
   const legend =
     source.legend !== undefined &&

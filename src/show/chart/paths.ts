@@ -1,7 +1,7 @@
 import { periodLabel, type TimeIndex } from "../../data/index.js";
 import { number } from "../text/figures.js";
 import { colours, lineGrey } from "./colours.js";
-import { type ChartBody, tooltip } from "./spec.js";
+import { type ChartBody, panelHeading, tooltip } from "./spec.js";
 import { timeScale } from "./time-axis.js";
 
 /** A point of a path over time, with its band where there is one. */
@@ -17,7 +17,9 @@ export interface PathPoint {
 export interface Path {
   readonly points: readonly PathPoint[];
   /** What the values are: a constant of this room. */
-  readonly title: string;
+  readonly title: string | null;
+  /** A heading above the picture; may be a name from the data. */
+  readonly heading?: string;
   /** Periods marked by upright lines. */
   readonly marks?: readonly number[];
   /** Whether zero is marked. Default false. */
@@ -48,6 +50,7 @@ export function pathPanel(index: Omit<TimeIndex, "ordinals">, path: Path): Chart
   return {
     width: path.width ?? 600,
     height: path.height ?? 180,
+    ...panelHeading(path.heading),
     data: { values },
     layer: [
       ...(banded

@@ -1,6 +1,6 @@
 import { number } from "../text/figures.js";
 import { colours, lineGrey } from "./colours.js";
-import { type ChartBody, tooltip } from "./spec.js";
+import { type ChartBody, panelHeading, tooltip } from "./spec.js";
 
 /** Points in a plane, with what goes through them. */
 export interface Scatter {
@@ -14,9 +14,11 @@ export interface Scatter {
   readonly line?: readonly { readonly x: number; readonly y: number }[];
   /** A straight line from end to end: value at x. */
   readonly straight?: (x: number) => number;
-  /** Titles of the axes: constants of this room, or names that have been made legible. */
+  /** Titles of the axes: constants of this room. */
   readonly xTitle: string;
   readonly yTitle: string;
+  /** A heading above the picture; may be a name from the data. */
+  readonly heading?: string;
   /** Whether the upright axis starts at zero. Default false. */
   readonly zero?: boolean;
   readonly size?: number;
@@ -47,6 +49,7 @@ export function scatterPanel(plot: Scatter): ChartBody {
   return {
     width: plot.width ?? 260,
     height: plot.height ?? 190,
+    ...panelHeading(plot.heading),
     layer: [
       ...(banded
         ? [

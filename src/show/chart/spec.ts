@@ -28,6 +28,9 @@ const grid = "rgba(128,128,128,0.22)";
 
 // One dress for light and dark pages: nothing behind the picture, mid-greys that read on both.
 const config = {
+  // With ARIA texts on, Vega-Lite writes every title of an axis into an expression, in version 5.6 without escaping it.
+  // The words for who cannot see a chart are its description, written by hand.
+  aria: false,
   background: "transparent",
   font: "system-ui, sans-serif",
   view: { stroke: null, continuousWidth: 600, continuousHeight: 200 },
@@ -94,6 +97,14 @@ export function pictures({ body, panels }: ChartSource): TopLevelSpec[] {
 function complete(body: ChartBody): TopLevelSpec {
   const spec = { $schema: schema, background: "transparent", ...body, config };
   return JSON.parse(JSON.stringify(spec)) as TopLevelSpec;
+}
+
+/**
+ * A heading above one picture of several: the only title, beside headers and legends, that may be a name from the data.
+ * Titles of axes and tooltips end up in expressions.
+ */
+export function panelHeading(text: string | undefined): object {
+  return text === undefined ? {} : { title: { text, fontSize: 12 } };
 }
 
 /**

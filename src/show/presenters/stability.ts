@@ -68,7 +68,8 @@ function recursiveChart(m: Stability, of?: string): ChartSource {
   const panels = chosen.map(({ term, points }) =>
     pathPanel(timesOf(m).index, {
       points: points.map(({ period, estimate, low, high }) => ({ at: period, value: estimate, low, high })),
-      title: name(term, 40),
+      title: null,
+      heading: name(term, 40),
       ...(of === undefined ? { width: 280, height: 120 } : {}),
     }),
   );

@@ -76,7 +76,7 @@ export function htmlTable(table: TableModel, options: HtmlTableOptions = {}): Ht
   const caption =
     options.caption &&
     html`<caption style="caption-side:top;text-align:left;padding:0 0 0.2em 0;font-style:normal">${table.title}</caption>`;
-  return html`<div style="overflow-x:auto;max-width:100%"><table style="border-collapse:collapse;table-layout:auto;margin:0;width:auto;font-size:inherit;font-variant-numeric:tabular-nums">${caption}<thead style="border-bottom:${line};vertical-align:bottom"><tr style="background:none">${over}</tr>${
+  return html`<div style="overflow-x:auto;max-width:100%"><table style="border-collapse:collapse;table-layout:auto;margin:0;width:auto;font-size:1em;font-variant-numeric:tabular-nums">${caption}<thead style="border-bottom:${line};vertical-align:bottom"><tr style="background:none">${over}</tr>${
     two && html`<tr style="background:none">${under}</tr>`
   }</thead><tbody>${rows}</tbody></table></div>`;
 }

@@ -33,7 +33,7 @@ const styles: Record<string, RegExp> = Object.fromEntries(
     cursor: "pointer",
     display: "grid|block",
     float: "right",
-    "font-size": "inherit|\\d*\\.?\\d+em",
+    "font-size": "\\d*\\.?\\d+em",
     "font-style": "normal",
     // The one property that an untrusted notebook loses: digits of one width, which most fonts have anyway.
     "font-variant-numeric": "tabular-nums",

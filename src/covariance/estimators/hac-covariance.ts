@@ -2,9 +2,9 @@ import type { Remark } from "../../data/index.js";
 import type { Covariance, Regression } from "../../estimate/index.js";
 import { InputError } from "../../numeric/index.js";
 import { type Kernel, lastLag } from "../kernels.js";
-import type { Law } from "../laws/choice.js";
+import { type Law, minds } from "../laws/choice.js";
 import { chiSquaredLaw, fisherLaw, normalLaw, studentLaw } from "../laws/classical-laws.js";
-import { fixedBForm, fixedBLaw } from "../laws/fixed-b.js";
+import { fixedBForm, fixedBLaw, UNEVEN_DESIGN_UP_TO } from "../laws/fixed-b.js";
 import { fixedBJointLaw } from "../laws/fixed-b-joint.js";
 import {
   caution,
@@ -51,7 +51,7 @@ export function hacCovariance(regression: Regression, request: HacRequest): Cova
   const factor = request.factor ? T / (T - k) : 1;
   const V = congruence(scores.back, sum, factor);
   const lags = lastLag(kernel, bandwidth, span);
-  const choice = { kernel, bandwidth, factor };
+  const choice = { kernel, bandwidth, factor, limit: law === "fixed-b limit" };
   const remarks = (): Remark[] => [
     ...(kernel.positive ? [] : notPositive(V, regression.terms)),
     ...chosen.remarks,
@@ -134,7 +134,7 @@ function bandwidthRemarks(
   if (bandwidth > span / 2) {
     remarks.push(caution(`Bandwidth ${bandwidth.toFixed(1)} is more than half of the ${span} periods.`));
   }
-  if (law !== "fixed-b") {
+  if (!minds(law)) {
     const why = kernel.positive ? "" : ` (the ${kernel.title} kernel has no fixed-b law here)`;
     remarks.push(caution(`Critical values ignore the bandwidth${why}: intervals are too narrow.`));
     return remarks;
@@ -143,10 +143,11 @@ function bandwidthRemarks(
     remarks.push(note("The bandwidth comes from the data; the critical values take it as fixed."));
   }
   // Below, every contrast has its own design's law; above, that is too dear and the limit may not hold.
-  for (let a = 0; a < k && span > 50_000; a++) {
+  const limit = law === "fixed-b limit";
+  for (let a = 0; a < k && (limit || span > UNEVEN_DESIGN_UP_TO); a++) {
     const unit = new Float64Array(k);
     unit[a] = 1;
-    if (fixedBForm(scores, unit) !== "limit, uneven design") continue;
+    if (fixedBForm(scores, unit, limit) !== "limit, uneven design") continue;
     remarks.push(
       caution(
         "Critical values are those of regressors that vary evenly over time; some here trend or shift, for which they are too small.",

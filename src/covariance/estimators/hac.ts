@@ -2,7 +2,7 @@ import { suggestion } from "../../data/index.js";
 import type { Covariance, CovarianceEstimator, Regression } from "../../estimate/index.js";
 import { InputError } from "../../numeric/index.js";
 import { type KernelName, kernelNamed } from "../kernels.js";
-import { type Law, laws } from "../laws/choice.js";
+import { type Law, laws, minds } from "../laws/choice.js";
 import { requireErrors } from "../remarks.js";
 import { type BandwidthRule, requireBandwidth, ruleTitle } from "../rules/bandwidth.js";
 import { hacCovariance } from "./hac-covariance.js";
@@ -20,8 +20,9 @@ export interface HacOptions {
   /** Multiply by T/(T − k); true unless said. */
   readonly factor?: boolean;
   /**
-   * What t ratios are judged by: `fixed-b` takes the bandwidth into account; `t` and `normal` ignore it. Unless said `fixed-b` for kernels
-   * that cannot give a negative variance and `t` for the truncated and Tukey–Hanning ones, for which fixed-b has no law here.
+   * What t ratios are judged by. `fixed-b` takes the bandwidth into account, on the design at hand up to 1,000 periods and in the limit
+   * beyond; `fixed-b limit` is the limit at any length; `t` and `normal` ignore the bandwidth. Unless said `fixed-b` for
+   * kernels that cannot give a negative variance and `t` for the truncated and Tukey–Hanning ones, for which fixed-b has no law here.
    */
   readonly law?: Law;
 }
@@ -51,7 +52,7 @@ export function hac(options: HacOptions = {}): CovarianceEstimator {
 
 function requireLaw(law: Law, positive: boolean, kernel: string): void {
   if (!laws.includes(law)) throw new InputError(`hac: there is no law "${law}".${suggestion(law, laws)}`);
-  if (law === "fixed-b" && !positive) {
+  if (minds(law) && !positive) {
     throw new InputError(
       `hac: the ${kernel} kernel can give a negative variance, so its t ratio has no fixed-b law. ` +
         `Use law: "t" or "normal", or the "bartlett", "parzen", "quadratic spectral" or "daniell" kernel.`,
@@ -64,7 +65,7 @@ export interface NeweyWestOptions {
   readonly lags?: number;
   /** Multiply by T/(T − k); true unless said. */
   readonly factor?: boolean;
-  /** `fixed-b` unless said; `t` and `normal` ignore the bandwidth. */
+  /** `fixed-b` unless said; see `HacOptions`. */
   readonly law?: Law;
 }
 

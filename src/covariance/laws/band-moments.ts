@@ -3,8 +3,8 @@ import { dot, dotAt } from "../shape/vectors.js";
 import { type ContrastDesign, imagesOf } from "./design.js";
 import { type LagOperator, lagOperator, toeplitzOperator } from "./toeplitz.js";
 
-/** Above this many products the moments cost more than the eigenvalues they save. */
-const AFFORDABLE = 4_000_000;
+/** Above this many products a period the moments cost more than the eigenvalues they save. */
+const AFFORDABLE = 4000;
 /** Lags of the quadratic spectral kernel that the third and fourth moments take in, in bandwidths. */
 const REACH = 3;
 
@@ -30,7 +30,7 @@ export function higherMoments(
   const reach = kernel.finite ? lastLag(kernel, bandwidth, n) : Math.ceil(REACH * bandwidth);
   const last = Math.min(n - 1, reach);
   const boxes = kernel.name === "bartlett" && last > 12;
-  if (n * (boxes ? 20 * last : 2 * last * last) > AFFORDABLE) return undefined;
+  if ((boxes ? 8 * last : 2 * last * last) > AFFORDABLE) return undefined;
   const row = lagWeights(kernel, bandwidth, last);
   const raw = boxes ? boxBand(squares, bandwidth, last) : productBand(squares, row);
   let { third, fourth } = raw;

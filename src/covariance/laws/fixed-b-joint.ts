@@ -13,8 +13,8 @@ import { mixtureLaw, type SimulatedJointLaw } from "./mixture.js";
 export function fixedBJointLaw(scores: Scores, restrictions: Matrix, choice: FixedB): SimulatedJointLaw {
   const q = restrictions.rows;
   const b = choice.bandwidth / scores.span;
-  const own = contrasts(restrictions).every((c) => fixedBForm(scores, c) === "own design");
-  const count = own ? Math.max(4000, Math.min(12_000, Math.floor(3e6 / scores.span))) : 24_000;
+  const own = contrasts(restrictions).every((c) => fixedBForm(scores, c, choice.limit) === "own design");
+  const count = own ? Math.max(4000, Math.min(12_000, Math.floor(3e6 / scores.span))) : 16_000;
   let sample: Float64Array | undefined;
   const draws = (): Float64Array => {
     sample ??= own

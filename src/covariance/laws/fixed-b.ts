@@ -1,10 +1,9 @@
 import type { ReferenceLaw } from "../../estimate/index.js";
 import type { Kernel } from "../kernels.js";
 import type { Scores } from "../scores.js";
-import { criticalValue, quadraticTail } from "./craig.js";
 import { type ContrastDesign, contrastDesign, hacForm } from "./design.js";
-import { formLaw, lawOf } from "./form-law.js";
-import { limitSpectra } from "./limit.js";
+import { formLaw } from "./form-law.js";
+import { limitLaw } from "./limit.js";
 import { unevenness } from "./unevenness.js";
 
 /** Up to here the law is that of the design at hand. */
@@ -19,6 +18,8 @@ export interface FixedB {
   readonly bandwidth: number;
   /** The factor that the variance carries, T/(T − k) or 1. */
   readonly factor: number;
+  /** The limit form at any length of sample. */
+  readonly limit?: boolean;
 }
 
 /** Which of the two forms a contrast's law takes. */
@@ -43,10 +44,10 @@ export function designFor(scores: Scores, contrast: Float64Array): ContrastDesig
   return design;
 }
 
-export function fixedBForm(scores: Scores, contrast: Float64Array): FixedBForm {
-  if (scores.span <= OWN_DESIGN_UP_TO) return "own design";
+export function fixedBForm(scores: Scores, contrast: Float64Array, limit = false): FixedBForm {
+  if (!limit && scores.span <= OWN_DESIGN_UP_TO) return "own design";
   if (unevenness(designFor(scores, contrast)) <= UNEVEN) return "limit";
-  return scores.span <= UNEVEN_DESIGN_UP_TO ? "own design" : "limit, uneven design";
+  return !limit && scores.span <= UNEVEN_DESIGN_UP_TO ? "own design" : "limit, uneven design";
 }
 
 /** b as a label writes it. */
@@ -57,7 +58,7 @@ export function shownB(b: number): string {
 /** The law of a contrast's t ratio under a kernel estimator, its bandwidth taken as fixed. */
 export function fixedBLaw(scores: Scores, contrast: Float64Array, choice: FixedB): ReferenceLaw {
   const b = choice.bandwidth / scores.span;
-  const form = fixedBForm(scores, contrast);
+  const form = fixedBForm(scores, contrast, choice.limit);
   const shown = shownB(b);
   if (form === "own design")
     return ownDesignLaw(scores, contrast, choice, `fixed-b, b = ${shown}, on this design`);
@@ -71,15 +72,4 @@ export function fixedBLaw(scores: Scores, contrast: Float64Array, choice: FixedB
 function ownDesignLaw(scores: Scores, contrast: Float64Array, choice: FixedB, name: string): ReferenceLaw {
   const { kernel, bandwidth, factor } = choice;
   return formLaw(name, () => hacForm(designFor(scores, contrast), kernel, bandwidth), factor);
-}
-
-/** The limit law, by Richardson's rule from two grids. @param b at most 1. */
-export function limitLaw(kernel: Kernel, b: number, name: string): ReferenceLaw {
-  const tail = (c: number): number => {
-    const { coarse, fine } = limitSpectra(kernel, b);
-    const p = quadraticTail(c, fine);
-    if (coarse === fine) return p;
-    return p * (p / quadraticTail(c, coarse)) ** (1 / 3);
-  };
-  return lawOf(name, tail, (alpha) => criticalValue(tail, alpha));
 }

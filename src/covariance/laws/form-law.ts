@@ -11,7 +11,7 @@ const ERROR = 2e-4;
  * resolved as the point asked about needs, and no more: tails near 5 % are right to 1e-5, near
  * 0.1 % to 1 part in 1,000, near 1e-6 to 1 in 100, checked against all eigenvalues.
  */
-export function formLaw(name: string, make: () => Form, factor: number): ReferenceLaw {
+export function formLaw(name: string, make: () => Form, factor: number, error = ERROR): ReferenceLaw {
   let prepared: { form: Form; resolve: Resolver } | undefined;
   const prepare = (): { form: Form; resolve: Resolver } => {
     if (!prepared) {
@@ -25,23 +25,23 @@ export function formLaw(name: string, make: () => Form, factor: number): Referen
   const tail = (c: number): number => {
     if (c === 0) return 1;
     const { form, resolve } = prepare();
-    const p = quadraticTail(c * root, resolve(roughCritical(0.05, form), ERROR));
-    return p > 1e-10 ? quadraticTail(c * root, resolve(c * root, allowed(p))) : p;
+    const p = quadraticTail(c * root, resolve(roughCritical(0.05, form), error));
+    return p > 1e-10 ? quadraticTail(c * root, resolve(c * root, allowed(p, error))) : p;
   };
   return lawOf(name, tail, (alpha) => {
     const { form, resolve } = prepare();
     const first = roughCritical(alpha, form);
-    const before = resolve(first, ERROR);
+    const before = resolve(first, error);
     const c = criticalValue((x) => quadraticTail(x, before), alpha, first);
-    const after = resolve(c, ERROR);
+    const after = resolve(c, error);
     return (after === before ? c : criticalValue((x) => quadraticTail(x, after), alpha, c)) / root;
   });
 }
 
-/** The relative error that a reader of this p can do with. */
-function allowed(p: number): number {
-  if (p > 0.01) return ERROR;
-  return p > 1e-4 ? 1e-3 : p > 1e-7 ? 1e-2 : 0.1;
+/** The relative error that a reader of this p can do with, where `error` will do at the usual levels. */
+function allowed(p: number, error: number): number {
+  if (p > 0.01) return error;
+  return error * (p > 1e-4 ? 5 : p > 1e-7 ? 50 : 500);
 }
 
 /** About where the critical value is, from the first two moments as degrees of freedom. */
@@ -51,7 +51,12 @@ function roughCritical(alpha: number, { sums }: Form): number {
   return (z + (z ** 3 + z) / (4 * df) + z ** 3 / (3 * df * df)) / Math.sqrt(sums.first);
 }
 
-/** A reference law from its two-sided tail; critical values are kept. */
+/** A reference law from its two-sided tail alone. */
+export function tailLaw(name: string, tail: (c: number) => number): ReferenceLaw {
+  return lawOf(name, tail, (alpha) => criticalValue(tail, alpha));
+}
+
+/** A reference law from its two-sided tail and critical values; those asked for are kept. */
 export function lawOf(
   name: string,
   tail: (c: number) => number,

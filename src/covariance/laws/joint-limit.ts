@@ -1,12 +1,14 @@
 import { counterRandom } from "../../numeric/index.js";
 import type { Kernel } from "../kernels.js";
 import { chiSquaredDraw } from "./gamma.js";
-import { limitSpectra } from "./limit.js";
+import { limitOf } from "./limit.js";
 import { schurFirst } from "./schur.js";
 import type { Bundle } from "./spectrum.js";
 
 const SEED = 20_250_103;
 const cache = new Map<string, Float64Array>();
+/** The spectrum is resolved for tails beyond this: smooth kernels have long joint tails, and few eigenvalues. */
+const far = ({ order }: Kernel): number => (order === 1 ? 8 : 60);
 /** Up to this many small eigenvalues are drawn singly. */
 const SINGLE = 40;
 
@@ -26,7 +28,7 @@ export function drawsInLimit(kernel: Kernel, b: number, q: number, count: number
 }
 
 function draw(kernel: Kernel, b: number, q: number, count: number): Float64Array {
-  const { leading, rest } = limitSpectra(kernel, b).fine;
+  const { leading, rest } = limitOf(kernel, b).spectrum(far(kernel), 1e-3);
   const lambda = [...leading];
   const wisharts: Bundle[] = [];
   for (const bundle of rest) {

@@ -6,10 +6,11 @@ import { RowProblem } from "./problem.js";
 import type { RawColumn } from "./raw-table.js";
 import { onZone, type Times } from "./time-column.js";
 
-/** Reads a time column of texts or whole numbers; all rows must be written in the form of the first. */
+/** Reads a time column of whole numbers, or of texts that are all written in the form of the first. */
 export function readWrittenTimes(time: Exclude<RawColumn, { kind: "instant" }>, options: LoadOptions): Times {
   const where = `time column ${JSON.stringify(time.name)}`;
-  const texts = writtenPeriods(time, where);
+  if (time.kind === "number") return wholeTimes(time.values, where, options);
+  const texts = writtenPeriods(time.values, where);
   const first = formOf(texts[0]!, options.dates);
   if (first === undefined) {
     throw new RowProblem(
@@ -48,18 +49,30 @@ export function readWrittenTimes(time: Exclude<RawColumn, { kind: "instant" }>, 
   return { form: first, instants, walls: instants.map((at) => clock.wallOf(at)), offset };
 }
 
+/** Whole numbers held as such: years when all of them could be, counters otherwise. */
+function wholeTimes(values: Float64Array, where: string, options: LoadOptions): Times {
+  let couldBeYears = options.every === undefined || parseStep(options.every).unit !== "integer";
+  for (let row = 0; row < values.length; row++) {
+    const value = values[row]!;
+    if (Number.isNaN(value)) throw new RowProblem(row, where, "it is blank. Every row needs a period.");
+    if (!Number.isSafeInteger(value)) {
+      throw new RowProblem(row, where, `${value} is no whole number and no written period.`);
+    }
+    if (value < 1000 || value > 2999) couldBeYears = false;
+  }
+  if (!couldBeYears) return { form: "integer", instants: values, walls: values, offset: false };
+  const starts = values.map((year) => Date.UTC(year, 0, 1));
+  return { form: "year", instants: starts, walls: starts, offset: false };
+}
+
 function hasOffset(text: string, form: WrittenForm): boolean {
   return form === "date-time" && /(Z|[+-]\d\d:?(\d\d)?)$/.test(text.slice(11));
 }
 
-/** The time column as texts; whole numbers count as written years or counters. */
-function writtenPeriods(time: Exclude<RawColumn, { kind: "instant" }>, where: string): string[] {
-  return Array.from(time.values as ArrayLike<number | string | null>, (value, row) => {
-    if (value === null || (typeof value === "number" && Number.isNaN(value)) || String(value).trim() === "") {
+function writtenPeriods(values: ArrayLike<number | string | null>, where: string): string[] {
+  return Array.from(values, (value, row) => {
+    if (value === null || String(value).trim() === "") {
       throw new RowProblem(row, where, "it is blank. Every row needs a period.");
-    }
-    if (typeof value === "number" && !Number.isInteger(value)) {
-      throw new RowProblem(row, where, `${value} is no whole number and no written period.`);
     }
     return String(value).trim();
   });

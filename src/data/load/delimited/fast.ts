@@ -61,19 +61,20 @@ export async function readFast(
       const values = numbers[at++]!.join();
       const walls = pattern.offset ? numbers[at++]!.join() : undefined;
       if (values.some((value) => Number.isNaN(value))) return undefined;
-      columns.push(instants(name, pattern, values, walls));
+      columns.push(times(name, pattern, values, walls));
     } else if (kind === "number") columns.push({ name, kind, values: numbers[at++]!.join() });
     else columns.push(textual({ name, kind: "text", values: texts[at++]! }, kind, style));
   }
   return columns;
 }
 
-function instants(
+function times(
   name: string,
   { form, offset }: TimePattern,
   values: Float64Array,
   walls: Float64Array | undefined,
 ): RawColumn {
+  if (form === "integer") return { name, kind: "number", values };
   return { name, kind: "instant", form, values, offset, ...(walls ? { walls } : {}) };
 }
 

@@ -2,9 +2,9 @@ import { formOf } from "../../time/forms.js";
 
 /** A written form of times that DuckDB converts itself. */
 export interface TimePattern {
-  readonly form: "date" | "date-time";
+  readonly form: "date" | "date-time" | "integer";
   readonly offset: boolean;
-  /** SQL for the milliseconds of a text column (NaN where it is not in this form), and for its wall clock when there is an offset. */
+  /** SQL for the milliseconds (the whole number) of a text column, NaN where it is not in this form; and for its wall clock when there is an offset. */
   select(column: string): string[];
 }
 
@@ -20,6 +20,13 @@ export function timePattern(sample: readonly string[]): TimePattern | undefined 
       form,
       offset: false,
       select: (column) => [matching(column, day, `epoch_ms(CAST(TRY_CAST(${column} AS DATE) AS TIMESTAMP))`)],
+    };
+  }
+  if (form === "year" || form === "integer") {
+    return {
+      form: "integer",
+      offset: false,
+      select: (column) => [matching(column, "[+-]?\\d{1,15}", column)],
     };
   }
   if (form !== "date-time") return undefined;

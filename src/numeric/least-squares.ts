@@ -2,8 +2,8 @@ import { singularValues } from "./eigen.js";
 import { columnOf, type Matrix, matrix } from "./matrix.js";
 import { checkRank } from "./rank.js";
 import { refine } from "./refinement.js";
-import { norm, powerOfTwo, solveUpper } from "./scaling.js";
-import { tallR } from "./tall-qr.js";
+import { norm, solveUpper } from "./scaling.js";
+import { scaledTriangle } from "./tall-qr.js";
 
 /** What `solveLeastSquares` returns. */
 export interface LeastSquares {
@@ -23,25 +23,20 @@ export interface LeastSquares {
 
 /**
  * Least squares of y (length T) on the columns of X (T×k, T ≥ k): tall QR after power-of-two scaling of the
- * columns, then iterative refinement of the augmented system with residuals in doubled precision (Björck 1967),
- * which makes the coefficients right to about the last bit. Throws RankDeficient, naming the dependent columns.
+ * columns, then iterative refinement with residuals in doubled precision (after Björck 1967), which makes the coefficients right to about the last bit. Throws RankDeficient, naming the dependent columns.
  */
 export function solveLeastSquares(X: Matrix, y: Float64Array): LeastSquares {
   const { rows: T, columns: k } = X;
   const columns = Array.from({ length: k }, (_, j) => columnOf(X, j));
-  const scales = new Float64Array(k + 1);
-  columns.forEach((column, j) => {
-    scales[j] = powerOfTwo(norm(column));
-  });
-  scales[k] = powerOfTwo(norm(y));
-  const triangle = tallR([...columns, y], scales);
+  const { r: triangle, scales } = scaledTriangle([...columns, y]);
   const scaledR = matrix(k, k);
   for (let j = 0; j < k; j++) scaledR.data.set(triangle.data.subarray(j * (k + 1), j * (k + 1) + k), j * k);
   checkRank(scaledR, T, scales);
 
   const start = solveUpper(scaledR, triangle.data.subarray(k * (k + 1)), k);
   for (let j = 0; j < k; j++) start[j] = (start[j]! * scales[j]!) / scales[k]!;
-  const { coefficients, residuals } = refine(columns, y, scaledR, scales, start);
+  const scaledCondition = condition(scaledR);
+  const { coefficients, residuals } = refine(columns, y, scaledR, scales, start, scaledCondition);
 
   const R = matrix(k, k);
   for (let j = 0; j < k; j++)
@@ -54,7 +49,7 @@ export function solveLeastSquares(X: Matrix, y: Float64Array): LeastSquares {
     gramInverse: gramInverse(scaledR, scales),
     R,
     rss,
-    condition: condition(scaledR),
+    condition: scaledCondition,
   };
 }
 

@@ -1,7 +1,6 @@
 import { columnOf, type Matrix, matrix } from "./matrix.js";
 import { dot } from "./products.js";
-import { norm, powerOfTwo } from "./scaling.js";
-import { tallR } from "./tall-qr.js";
+import { scaledTriangle } from "./tall-qr.js";
 
 /**
  * Orthonormal basis (T×k) of the k independent columns of X (T×k): Q = X R⁻¹, then once more, which brings the
@@ -16,8 +15,7 @@ export function orthonormalBasis(X: Matrix): Matrix {
 function divideByTriangle(X: Matrix): Matrix {
   const { rows: T, columns: k } = X;
   const columns = Array.from({ length: k }, (_, j) => columnOf(X, j));
-  const scales = Float64Array.from(columns, (column) => powerOfTwo(norm(column)));
-  const r = tallR(columns, scales);
+  const { r, scales } = scaledTriangle(columns);
   const result = matrix(T, k);
   for (let j = 0; j < k; j++) {
     const target = columnOf(result, j);

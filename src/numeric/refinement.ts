@@ -1,13 +1,24 @@
 import type { Matrix } from "./matrix.js";
 import { norm, solveUpper, solveUpperTransposed } from "./scaling.js";
+import { padded, workspace } from "./wasm.js";
 
 const splitter = 134217729; // 2²⁷ + 1, Dekker (1971)
-const mostSteps = 6;
+const mostSteps = 8;
+const blockRows = 1024;
+/** The share of a coefficient that a further step may still change: one coefficient in 2¹⁷ is off by its last bit. */
+const settled = 2 ** -70;
+
+/** Coefficients as unevaluated sums of two numbers. */
+interface Pairs {
+  readonly high: Float64Array;
+  readonly low: Float64Array;
+}
 
 /**
- * Refines least-squares coefficients: the augmented system r + Xβ = y, X'r = 0 is solved again for its residuals,
- * which are formed in doubled precision (Dekker's products, Knuth's sums), until β no longer moves. The correction
- * uses Q = X R⁻¹ row by row, so no T×k matrix is stored. β is kept as a pair and rounded once.
+ * Refines least-squares coefficients: β ← β + R⁻¹R⁻ᵀ X'(y − Xβ), with the residuals and the gradient in doubled precision
+ * (Dekker's products, Knuth's sums; Björck 1967), until a further step could not change their rounding. A step multiplies
+ * the error by about κ·2⁻⁵³, so that for most designs one is enough, and is known to be by the condition number κ of the
+ * scaled triangle. β is kept as pairs and rounded once. Each step goes through X once, in blocks.
  */
 export function refine(
   columns: readonly Float64Array[],
@@ -15,53 +26,46 @@ export function refine(
   scaledR: Matrix,
   scales: Float64Array,
   start: Float64Array,
+  condition: number,
 ): { coefficients: Float64Array; residuals: Float64Array } {
   const k = columns.length;
-  const T = y.length;
-  const high = Float64Array.from(start);
-  const low = new Float64Array(k);
-  const residuals = new Float64Array(T);
-  fill(residuals, columns, y, high, low);
-  const misfit = new Float64Array(T);
+  const beta: Pairs = { high: Float64Array.from(start), low: new Float64Array(k) };
+  const residuals = new Float64Array(y.length);
+  const rest = new Float64Array(y.length);
+  const contraction = 16 * condition * condition * 2 ** -53;
   let before = Number.POSITIVE_INFINITY;
-  for (let step = 0; step < mostSteps; step++) {
-    // f = y − r − Xβ and X'r, both in doubled precision.
-    for (let t = 0; t < T; t++) misfit[t] = rowResidual(columns, y[t]!, residuals[t]!, high, low, t);
-    const gradient = Float64Array.from(columns, (column, j) => scales[j]! * exactDot(column, residuals));
-    const projected = projectOnQ(columns, misfit, scaledR, scales);
-    const pull = solveUpperTransposed(scaledR, gradient);
-    const right = projected.map((value, j) => value + pull[j]!);
-    const change = solveUpper(scaledR, right);
-    const size = norm(change.map((value, j) => value / (Math.abs(high[j]! / scales[j]!) || 1)));
-    if (!(size < before)) break; // no longer converging: the last pair stands
+  for (let step = 0; ; step++) {
+    const gradient = residualsAndGradient(columns, y, beta, residuals, rest);
+    for (let j = 0; j < k; j++) gradient[j]! *= scales[j]!;
+    const change = solveUpper(scaledR, solveUpperTransposed(scaledR, gradient));
+    const size = norm(change.map((value, j) => value / (Math.abs(beta.high[j]! / scales[j]!) || 1)));
+    if (!(size < before)) break; // no longer converging: the last pairs stand
     before = size;
+    const next = contraction * largestShare(change, beta.high, scales);
     for (let j = 0; j < k; j++) {
       change[j]! *= scales[j]!;
-      addToPair(high, low, j, change[j]!);
+      addToPair(beta, j, change[j]!);
     }
-    for (let t = 0; t < T; t++) {
-      let value = misfit[t]!;
-      for (let j = 0; j < k; j++) value -= columns[j]![t]! * change[j]!;
-      residuals[t]! += value;
+    if (size < settled || next < settled || step === mostSteps) {
+      correct(columns, change, residuals, rest);
+      break;
     }
-    if (size < 1e-18) break;
   }
-  const coefficients = high.map((value, j) => value + low[j]!);
-  fill(residuals, columns, y, high, low);
-  return { coefficients, residuals };
+  return { coefficients: beta.high.map((value, j) => value + beta.low[j]!), residuals };
 }
 
-function fill(
-  residuals: Float64Array,
-  columns: readonly Float64Array[],
-  y: Float64Array,
-  high: Float64Array,
-  low: Float64Array,
-): void {
-  for (let t = 0; t < y.length; t++) residuals[t] = rowResidual(columns, y[t]!, 0, high, low, t);
+/** The largest change over the smallest coefficient, both for columns at lengths near one. */
+function largestShare(change: Float64Array, beta: Float64Array, scales: Float64Array): number {
+  let largest = 0;
+  let smallest = Number.POSITIVE_INFINITY;
+  for (let j = 0; j < beta.length; j++) {
+    largest = Math.max(largest, Math.abs(change[j]!));
+    smallest = Math.min(smallest, Math.abs(beta[j]! / scales[j]!));
+  }
+  return largest / smallest;
 }
 
-function addToPair(high: Float64Array, low: Float64Array, j: number, value: number): void {
+function addToPair({ high, low }: Pairs, j: number, value: number): void {
   const a = high[j]!;
   const tail = low[j]! + value;
   const sum = a + tail;
@@ -69,79 +73,86 @@ function addToPair(high: Float64Array, low: Float64Array, j: number, value: numb
   high[j] = sum;
 }
 
-/** y_t − r_t − Σ x_tj (high_j + low_j), accumulated as a pair. */
-function rowResidual(
+/** Puts y − Xβ into `residuals` and what rounding leaves of it into `rest`. @returns X'(y − Xβ) */
+function residualsAndGradient(
   columns: readonly Float64Array[],
-  y: number,
-  r: number,
-  high: Float64Array,
-  low: Float64Array,
-  t: number,
-): number {
-  let sum = y - r;
-  let part = sum - y;
-  let tail = y - (sum - part) - (r + part);
-  for (let j = 0; j < columns.length; j++) {
-    const a = columns[j]![t]!;
-    const b = -high[j]!;
-    const product = a * b;
-    let c = splitter * a;
-    const ah = c - (c - a);
-    const al = a - ah;
-    c = splitter * b;
-    const bh = c - (c - b);
-    const bl = b - bh;
-    const error = al * bl - (product - ah * bh - al * bh - ah * bl);
-    const next = sum + product;
-    part = next - sum;
-    tail += sum - (next - part) + (product - part) + error - a * low[j]!;
-    sum = next;
-  }
-  return sum + tail;
-}
-
-/** x'r accumulated as a pair. */
-function exactDot(x: Float64Array, r: Float64Array): number {
-  let sum = 0;
-  let tail = 0;
-  for (let t = 0; t < x.length; t++) {
-    const a = x[t]!;
-    const b = r[t]!;
-    const product = a * b;
-    let c = splitter * a;
-    const ah = c - (c - a);
-    const al = a - ah;
-    c = splitter * b;
-    const bh = c - (c - b);
-    const bl = b - bh;
-    const error = al * bl - (product - ah * bh - al * bh - ah * bl);
-    const next = sum + product;
-    const part = next - sum;
-    tail += sum - (next - part) + (product - part) + error;
-    sum = next;
-  }
-  return sum + tail;
-}
-
-/** Q'f with the rows of Q = X R⁻¹ solved on the way. */
-function projectOnQ(
-  columns: readonly Float64Array[],
-  f: Float64Array,
-  r: Matrix,
-  scales: Float64Array,
+  y: Float64Array,
+  beta: Pairs,
+  residuals: Float64Array,
+  rest: Float64Array,
 ): Float64Array {
   const k = columns.length;
-  const row = new Float64Array(k);
-  const result = new Float64Array(k);
-  for (let t = 0; t < f.length; t++) {
-    const weight = f[t]!;
-    if (weight === 0) continue;
-    for (let j = 0; j < k; j++) {
-      let value = columns[j]![t]! * scales[j]!;
-      for (let i = 0; i < j; i++) value -= r.data[j * k + i]! * row[i]!;
-      row[j] = value / r.data[j * k + j]!;
-      result[j]! += row[j]! * weight;
-    }
+  const T = y.length;
+  const stride = padded(Math.min(T, blockRows));
+  const { kernels, numbers, at } = workspace(k * stride, stride, stride, stride, 4 * k, 8 * k);
+  const [x, outcome, high, low, coefficients, sums] = at as [number, number, number, number, number, number];
+  for (let j = 0; j < k; j++) {
+    const value = -beta.high[j]!;
+    const c = splitter * value;
+    const upper = c - (c - value);
+    numbers.set([value, upper, value - upper, -beta.low[j]!], coefficients + 4 * j);
   }
-  return result;
+  const pointers = [8 * x, 8 * stride, k] as const;
+  for (let start = 0; start < T; start += blockRows) {
+    const rows = Math.min(blockRows, T - start);
+    copyBlock(columns, start, rows, numbers, x, stride);
+    copyBlock([y], start, rows, numbers, outcome, stride);
+    kernels.residualPairs(...pointers, padded(rows), 8 * outcome, 8 * coefficients, 8 * high, 8 * low);
+    kernels.gradient(...pointers, padded(rows), 8 * high, 8 * low, 8 * sums);
+    residuals.set(numbers.subarray(high, high + rows), start);
+    rest.set(numbers.subarray(low, low + rows), start);
+  }
+  return Float64Array.from({ length: k }, (_, j) => joined(numbers, sums + 8 * j));
+}
+
+/** Four sums and their tails as one number, the sums added without loss. */
+function joined(numbers: Float64Array, at: number): number {
+  let sum = 0;
+  let tail = 0;
+  for (const i of [0, 2, 1, 3]) {
+    const value = numbers[at + i]!;
+    const next = sum + value;
+    const part = next - sum;
+    tail += sum - (next - part) + (value - part) + numbers[at + 4 + i]!;
+    sum = next;
+  }
+  return sum + tail;
+}
+
+/** Takes Xδ off the residuals, a small change δ of the coefficients having been made. */
+function correct(
+  columns: readonly Float64Array[],
+  change: Float64Array,
+  residuals: Float64Array,
+  rest: Float64Array,
+): void {
+  const k = columns.length;
+  const T = residuals.length;
+  const stride = padded(Math.min(T, blockRows));
+  const { kernels, numbers, at } = workspace(k * stride, stride, stride, k);
+  const [x, high, low, delta] = at as [number, number, number, number];
+  numbers.set(change, delta);
+  for (let start = 0; start < T; start += blockRows) {
+    const rows = Math.min(blockRows, T - start);
+    copyBlock(columns, start, rows, numbers, x, stride);
+    copyBlock([residuals, rest], start, rows, numbers, high, stride);
+    kernels.correctResiduals(8 * x, 8 * stride, k, padded(rows), 8 * delta, 8 * high, 8 * low);
+    residuals.set(numbers.subarray(high, high + rows), start);
+  }
+}
+
+/** Copies rows of each column to the kernels' memory, with zeros up to a whole number of fours. */
+function copyBlock(
+  columns: readonly Float64Array[],
+  start: number,
+  rows: number,
+  numbers: Float64Array,
+  to: number,
+  stride: number,
+): void {
+  for (let j = 0; j < columns.length; j++) {
+    const at = to + j * stride;
+    numbers.set(columns[j]!.subarray(start, start + rows), at);
+    numbers.fill(0, at + rows, at + padded(rows));
+  }
 }

@@ -10,11 +10,13 @@ export { singularValues, symmetricEigen } from "./eigen.js";
 export { symmetricEigenvalues } from "./eigenvalues.js";
 export { InputError } from "./failure.js";
 export { fft } from "./fft.js";
+export { laggedProducts } from "./lagged-products.js";
 export { leadingEigenvalues } from "./leading-eigenvalues.js";
 export { type LeastSquares, solveLeastSquares } from "./least-squares.js";
 export { columnOf, entry, fromColumns, type Matrix, matrix } from "./matrix.js";
 export { hessian, type MinimiseOptions, type Minimum, minimise } from "./minimise.js";
 export { brentMinimum } from "./minimum.js";
+export { movingSumProducts } from "./moving-sums.js";
 export { orthonormalBasis, projectOut } from "./orthonormal.js";
 export {
   crossproduct,
@@ -33,3 +35,4 @@ export { RankDeficient } from "./rank.js";
 export { brentRoot } from "./roots.js";
 export { norm, powerOfTwo, solveUpper, solveUpperTransposed } from "./scaling.js";
 export { scoreGram, scoreLaggedProducts, scoreMovingSums } from "./score-sums.js";
+export type { RowSeries } from "./series-block.js";

@@ -6,7 +6,7 @@ import type { Series } from "./series.js";
 import { spectralSum } from "./spectral.js";
 
 /** From this many lags on the transform is cheaper than the filter. */
-const FILTERED_LAGS = 48;
+const FILTERED_LAGS = 256;
 
 /**
  * Σ_{|j| < n} κ(j/S) Σ_t v_t v'_{t−j}, not divided by n: Bartlett by moving sums at a cost that does not depend on S,

@@ -52,10 +52,11 @@ export function bundle(result: Result, card: Card): MimeBundle {
 export function htmlCard(card: Card): Html {
   const { finding, remarks = [], parts } = card;
   const small = "font-size:0.85em;opacity:0.8";
-  return html`<div class="lagbook mathjax_ignore tex2jax_ignore" style="max-width:64em;margin:0.3em 0;padding:0.5em 0 0.4em 0.9em;border-left:3px solid rgba(0,114,178,0.75);text-align:left;line-height:1.45;overflow-wrap:break-word;page-break-inside:avoid"><div style="margin:0 0 0.3em 0"><strong>${name(card.subject)}</strong>${card.headline.map(
+  return html`<div class="lagbook mathjax_ignore tex2jax_ignore" style="max-width:80em;margin:0.3em 0;padding:0.5em 0 0.4em 0.9em;border-left:3px solid rgba(0,114,178,0.75);text-align:left;line-height:1.45;overflow-wrap:break-word;page-break-inside:avoid"><div style="margin:0 0 0.3em 0"><strong>${name(card.subject)}</strong>${card.headline.map(
     (fact) => html`<span style="opacity:0.8"> · ${fact}</span>`,
   )}</div>${
-    finding !== undefined && html`<div style="margin:0 0 0.5em 0;font-size:1.1em">${finding}</div>`
+    finding !== undefined &&
+    html`<div style="margin:0 0 0.5em 0;max-width:56em;font-size:1.1em">${finding}</div>`
   }${remarksHtml(remarks)}${parts.filter((part) => part.html.markup !== "").map(partHtml)}<div style="margin:0.5em 0 0 0;${small}">${footer(card).join(" · ")}</div></div>`;
 }
 
@@ -74,7 +75,7 @@ function remarksHtml(remarks: readonly Remark[]): Html {
 function remarkHtml({ severity: kind, text }: Remark): Html {
   const mark =
     kind === "caution" ? "border-left:3px solid #D55E00" : "border-left:3px solid rgba(128,128,128,0.5)";
-  return html`<div style="margin:0 0 0.4em 0;padding:0 0 0 0.6em;${mark}"><strong>${severity[kind]}:</strong> ${text}</div>`;
+  return html`<div style="margin:0 0 0.4em 0;max-width:60em;padding:0 0 0 0.6em;${mark}"><strong>${severity[kind]}:</strong> ${text}</div>`;
 }
 
 function partHtml(part: Part): Html {

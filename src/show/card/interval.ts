@@ -22,6 +22,12 @@ export interface IntervalLook {
 const at = (percent: number) => `left:${percent.toFixed(2)}%`;
 const clip = (percent: number) => Math.min(100, Math.max(0, percent));
 
+/** An arrow at one end of the box: there is more beyond it. */
+function arrow(side: "left" | "right", colour: string): string {
+  const back = side === "left" ? "right" : "left";
+  return `<span style="position:absolute;${side}:0;top:50%;margin-top:-5px;width:0;height:0;border-top:5px solid transparent;border-bottom:5px solid transparent;border-${back}:7px solid ${colour}"></span>`;
+}
+
 /** The mark of zero (dashed) on an axis, if zero is on it. */
 function zeroMark(axis: Axis): Html {
   const zero = axis.position(0);
@@ -51,10 +57,8 @@ export function drawInterval(axis: Axis, interval: Interval, look: IntervalLook 
       `<span style="position:absolute;${at(from)};width:${(to - from).toFixed(2)}%;top:50%;margin-top:-${thick / 2}px;border-top:${thick}px ${look.line ?? "solid"} ${colour}"></span>`,
     );
   }
-  const arrow = (side: "left" | "right") =>
-    `<span style="position:absolute;${side}:0;top:50%;margin-top:-5px;width:0;height:0;border-top:5px solid transparent;border-bottom:5px solid transparent;border-${side === "left" ? "right" : "left"}:7px solid ${colour}"></span>`;
-  if (left < 0) pieces.push(arrow("left"));
-  if (right > 100) pieces.push(arrow("right"));
+  if (left < 0) pieces.push(arrow("left", colour));
+  if (right > 100) pieces.push(arrow("right", colour));
   const point = axis.position(estimate);
   if (point >= 0 && point <= 100) {
     pieces.push(
@@ -85,13 +89,16 @@ export function drawSpan(axis: Axis, span: Span): Html {
       : "";
   };
   const point = axis.position(span.estimate);
-  const place = `position:absolute;${at(clip(point))};top:50%;margin-left:-5px;margin-top:-5px`;
+  const beyond =
+    (axis.position(span.outer[0]) < 0 ? arrow("left", colour) : "") +
+    (axis.position(span.outer[1]) > 100 ? arrow("right", colour) : "");
+  const place = `position:absolute;${at(point)};top:50%;margin-left:-5px;margin-top:-5px`;
   const mark = {
     full: `<span style="${place};width:0;height:0;border:5px solid ${colour};border-radius:50%"></span>`,
     half: `<span style="${place};border:2px solid ${colour};border-left:5px solid ${colour};box-sizing:border-box;width:10px;height:10px;border-radius:50%"></span>`,
     none: `<span style="${place};width:6px;height:6px;border:2px solid ${colour};border-radius:50%;box-sizing:content-box"></span>`,
   }[span.filled];
-  return html`<div style="position:relative;height:1.85em;min-width:9em">${zeroMark(axis)}${trusted(line(span.outer, 1.5) + line(span.inner, 4) + mark)}</div>`;
+  return html`<div style="position:relative;height:1.85em;min-width:9em">${zeroMark(axis)}${trusted(line(span.outer, 1.5) + line(span.inner, 4) + beyond + (point >= 0 && point <= 100 ? mark : ""))}</div>`;
 }
 
 /** The figures on an axis, for the heading of the column that intervals are drawn in. */

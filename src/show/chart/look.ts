@@ -35,7 +35,7 @@ function lines(look: Look, height: number): ChartBody {
       f: number(mean),
     })),
   );
-  const x = time.encoding("t");
+  const x = time.encoding("t", 5);
   const y = (field: string) => ({
     field,
     type: "quantitative",

@@ -43,12 +43,13 @@ export function pathPanel(index: Omit<TimeIndex, "ordinals">, path: Path): Chart
     g: low === undefined || high === undefined ? "" : `${number(low)} to ${number(high)}`,
   }));
   const banded = points.some((point) => point.low !== undefined);
-  const x = time.encoding("t");
+  const width = path.width ?? 600;
+  const x = time.encoding("t", width < 400 ? 4 : 8);
   const y = { field: "v", type: "quantitative", title, scale: { zero: path.zero ?? false } };
   const tips = tooltip({ p: "period", f: "value", ...(banded ? { g: "band" } : {}) });
   const lines = path.mark !== "points";
   return {
-    width: path.width ?? 600,
+    width,
     height: path.height ?? 180,
     ...panelHeading(path.heading),
     data: { values },

@@ -5,7 +5,7 @@ export interface TimeScale {
   /** The value of a period on the axis: milliseconds since 1970 in UTC, or the whole number that it is. */
   readonly at: (ordinal: number) => number;
   /** The encoding of the axis for a field that holds such values. */
-  readonly encoding: (field: string, title?: string | null) => Record<string, unknown>;
+  readonly encoding: (field: string, ticks?: number) => Record<string, unknown>;
 }
 
 /** The horizontal axis for a step: time in UTC, whatever zone the viewer is in; plain numbers for whole numbers. */
@@ -13,23 +13,23 @@ export function timeScale(step: Step): TimeScale {
   if (step.unit === "integer") {
     return {
       at: (ordinal) => ordinal * step.count + (step.offset ?? 0),
-      encoding: (field, title = null) => ({
+      encoding: (field, ticks = 8) => ({
         field,
         type: "quantitative",
-        title,
+        title: null,
         scale: { zero: false, nice: false },
-        axis: { format: "d", tickMinStep: 1, grid: false },
+        axis: { format: "d", tickMinStep: 1, grid: false, tickCount: ticks },
       }),
     };
   }
   return {
     at: (ordinal) => periodDate(step, ordinal).getTime(),
-    encoding: (field, title = null) => ({
+    encoding: (field, ticks = 8) => ({
       field,
       type: "temporal",
-      title,
+      title: null,
       scale: { type: "utc", nice: false },
-      axis: { grid: false, labelOverlap: true, tickCount: 8 },
+      axis: { grid: false, labelOverlap: true, tickCount: ticks },
     }),
   };
 }

@@ -88,7 +88,7 @@ function estimatorsTable(m: Covariances, row: Row): TableModel {
       { key: "low", title: "from", group, align: "decimal" },
       { key: "high", title: "to", group, align: "decimal" },
       { key: "p", title: "p", align: "decimal" },
-      { key: "law", title: "Law" },
+      { key: "law", title: "Law", wrap: true },
     ],
     rows: row.intervals.map((interval): Cell[] => [
       sentence(m.estimators[interval.estimator]!.label),
@@ -112,13 +112,16 @@ function everything(m: Covariances): TableModel {
   };
 }
 
-// In classical standard errors all coefficients stand on one axis, whatever their units.
+// In classical standard errors all coefficients stand on one axis, whatever their units. One that is very far from zero, as
+// intercepts often are, ends in an arrow instead of pressing the others together.
 function commonAxis(m: Covariances): Axis {
-  return axisFor(
-    m.coefficients.flatMap((row) =>
-      judged(row).map(({ low, high }) => ({ low: low / row.classicalSe, high: high / row.classicalSe })),
-    ),
+  const ends = m.coefficients.flatMap((row) =>
+    judged(row).map(({ low, high }) => ({ low: low / row.classicalSe, high: high / row.classicalSe })),
   );
+  const reach = ends.map(({ low, high }) => Math.max(Math.abs(low), Math.abs(high))).sort((a, b) => a - b);
+  const most = Math.max(8, 3 * (reach[Math.floor(reach.length / 2)] ?? 0));
+  const clip = (x: number) => Math.max(-most, Math.min(most, x));
+  return axisFor(ends.map(({ low, high }) => ({ low: clip(low), high: clip(high) })));
 }
 
 function drawnSummary(m: Covariances): Html[] {

@@ -72,7 +72,7 @@ function details(m: Fit): Part {
     ["Log-likelihood", `${significant(m.logLikelihood, 6)} (normal errors)`],
     ["AIC, BIC", `${significant(m.aic, 6)}, ${significant(m.bic, 6)}`],
     ["Condition number", number(m.regression.condition, 3)],
-    ...(filled > 0 ? [["Filled values used", count(filled)] as const] : []),
+    ...(filled > 0 ? [["Periods on filled values", count(filled)] as const] : []),
     ...(left.length > 0 ? [["Periods left out", leftText(m)] as const] : []),
     ...(m.perfect
       ? []

@@ -91,8 +91,10 @@ function data(content: Html, column: Column, first: boolean, cell: Cell): Html {
   const full = typeof cell.value === "string" && cell.value !== cell.text && cell.value.length <= 300;
   const title = full && html` title="${cell.value as string}"`;
   // Long names and sentences may break, also in the middle of a word; figures and short names never.
-  const long = align === "left" && cell.text.length > 40;
-  const wrapping = long ? "min-width:16em;overflow-wrap:break-word" : "white-space:nowrap";
+  const long = align === "left" && cell.text.length > (column.wrap ? 14 : 40);
+  const wrapping = long
+    ? `min-width:${column.wrap ? 8 : 16}em;overflow-wrap:break-word`
+    : "white-space:nowrap";
   const style = `${base};${sides[align]};${wrapping}`;
   return first
     ? html`<th scope="row"${title} style="${style};font-weight:normal">${content}</th>`

@@ -22,6 +22,7 @@ const specials: Record<string, string> = {
   ρ: "$\\rho$",
   σ: "$\\sigma$",
   β: "$\\beta$",
+  π: "$\\pi$",
   Δ: "$\\Delta$",
   "≤": "$\\le$",
   "≥": "$\\ge$",
@@ -34,17 +35,21 @@ const specials: Record<string, string> = {
 /** A text with everything that means something to LaTeX made harmless, and our own signs in LaTeX's writing. */
 export function escapeLatex(text: string): string {
   return text
-    .split(/([⁰¹²³⁴⁵⁶⁷⁸⁹⁻]+)/u)
+    .split(/([⁰¹²³⁴⁵⁶⁷⁸⁹⁻]+|[₀₁₂₃₄₅₆₇₈₉]+)/u)
     .map((piece, i) =>
       i % 2 === 1
-        ? `$^{${lowered(piece)}}$`
-        : piece.replace(/[\\{}$&#%_~^<>|"−×∞χρσβΔ≤≥·√…–]/gu, (c) => specials[c]!),
+        ? `$${subscripts.includes(piece[0]!) ? "_" : "^"}{${lowered(piece)}}$`
+        : piece.replace(/[\\{}$&#%_~^<>|"−×∞χρσβπΔ≤≥·√…–]/gu, (c) => specials[c]!),
     )
     .join("");
 }
 
+const superscripts = "⁰¹²³⁴⁵⁶⁷⁸⁹⁻";
+const subscripts = "₀₁₂₃₄₅₆₇₈₉";
+
 function lowered(run: string): string {
-  return [...run].map((c) => "0123456789-"[[..."⁰¹²³⁴⁵⁶⁷⁸⁹⁻"].indexOf(c)]).join("");
+  const written = subscripts.includes(run[0]!) ? subscripts : superscripts;
+  return [...run].map((c) => "0123456789-"[[...written].indexOf(c)]).join("");
 }
 
 /**

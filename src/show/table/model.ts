@@ -15,6 +15,8 @@ export interface Column {
   readonly title: string;
   /** `decimal` lines figures up at their decimal point. Default `left`. */
   readonly align?: "left" | "right" | "decimal";
+  /** Whether its texts may always be broken into lines; otherwise only long ones are. */
+  readonly wrap?: boolean;
   /** Neighbouring columns of one group stand under one heading. */
   readonly group?: string;
 }

@@ -36,6 +36,16 @@ export function crossCorrelations(x: Float64Array, y: Float64Array, most: number
   });
 }
 
+/**
+ * T times the variance of a correlation of two unrelated series at any one lag, from their autocorrelations:
+ * 1 + 2 Σ r_x(j) r_y(j) (Bartlett 1946, Supplement to JRSS 8; from memory), at least that of series without memory.
+ */
+export function varianceOfUnrelated(x: readonly LagCorrelation[], y: readonly LagCorrelation[]): number {
+  let sum = 1;
+  for (let i = 0; i < Math.min(x.length, y.length); i++) sum += 2 * x[i]!.value * y[i]!.value;
+  return Math.max(1, sum);
+}
+
 /** Σ a_t b_{t−lag}. */
 function productAt(a: Float64Array, b: Float64Array, lag: number): number {
   let sum = 0;

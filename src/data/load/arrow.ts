@@ -1,6 +1,7 @@
 import { readFile } from "node:fs/promises";
 import type { DataType, Vector } from "apache-arrow";
 import { InputError } from "../../numeric/index.js";
+import { decodeLz4Frame } from "./lz4.js";
 import type { LoadOptions } from "./options.js";
 import { RowProblem } from "./problem.js";
 import type { RawColumn } from "./raw-table.js";
@@ -11,13 +12,16 @@ type Arrow = typeof import("apache-arrow");
 /** Reads an Arrow IPC file or stream (Feather version 2 is one). */
 export async function readArrow(path: string, options: LoadOptions): Promise<RawColumn[]> {
   const arrow = await import("apache-arrow");
+  arrow.compressionRegistry.set(arrow.CompressionType.LZ4_FRAME, { decode: decodeLz4Frame });
   const bytes = await readFile(path);
   let table: ReturnType<typeof arrow.tableFromIPC>;
   try {
     table = arrow.tableFromIPC(bytes);
   } catch (error) {
     const { message } = error as Error;
-    const out = message.includes("codec") ? "Save it uncompressed, or as Parquet" : message;
+    const out = message.includes("codec")
+      ? "it is compressed with Zstandard; save it with LZ4, uncompressed, or as Parquet"
+      : message;
     throw new InputError(`load: ${path} cannot be read as Arrow IPC: ${out}.`);
   }
   if (table.schema.fields.length === 0) throw new InputError(`load: ${path} is no Arrow IPC file.`);

@@ -19,7 +19,7 @@ function same(table: TimeTable, names = ["x", "n", "cents", "flag", "place"]): v
   for (const name of names) assert.deepEqual(valuesOf(table, name), expected[name], name);
 }
 
-for (const name of ["days.parquet", "days.arrow", "days-stream.arrow", "days.jsonl"]) {
+for (const name of ["days.parquet", "days.arrow", "days-lz4.arrow", "days-stream.arrow", "days.jsonl"]) {
   test(`${name}: every number to the last bit, dates, truth values, texts, missing cells`, async () => {
     const table = await load(path(name), { time: "day" });
     same(table);
@@ -84,6 +84,16 @@ test("the numbers have one fingerprint, whatever the format", async () => {
   assert.equal(files.size, 4);
 });
 
-test("a compressed Arrow file is refused with the way out", async () => {
-  await assert.rejects(load(path("days-lz4.arrow"), { time: "day" }), /uncompressed, or as Parquet/);
+test("an Arrow file in a compression that cannot be read is refused with the way out", async () => {
+  await assert.rejects(
+    load(path("days-zstd.arrow"), { time: "day" }),
+    /Zstandard; save it with LZ4, uncompressed, or as Parquet/,
+  );
+});
+
+test("LZ4: long columns, in several blocks, with matches that run into themselves", async () => {
+  const table = await load(path("long-lz4.arrow"), { time: "t" });
+  assert.equal(table.T, 12_000);
+  const x = table.numbers("x");
+  assert.ok(x.every((value, i) => value === (i % 1000 < 500 ? 7 : i / 3)));
 });

@@ -36,6 +36,9 @@ table = pa.table({
 parquet.write_table(table, "days.parquet")
 feather.write_feather(table, "days.arrow", compression="uncompressed")
 feather.write_feather(table, "days-lz4.arrow", compression="lz4")
+feather.write_feather(table, "days-zstd.arrow", compression="zstd")
+long = pa.table({"t": pa.array(range(12_000), pa.int32()), "x": pa.array([7.0 if i % 1000 < 500 else i / 3 for i in range(12_000)])})
+feather.write_feather(long, "long-lz4.arrow", compression="lz4", chunksize=12_000)
 with pa.OSFile("days-stream.arrow", "wb") as sink, pa.ipc.new_stream(sink, table.schema) as writer:
     writer.write_table(table)
 

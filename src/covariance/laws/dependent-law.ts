@@ -12,7 +12,7 @@ import { lawOf } from "./form-law.js";
  * 1.3 √T spread the eigenvalues out and need more.
  */
 function steps(span: number, bandwidth: number, { ar }: ErrorProcess): number {
-  const base = span <= 100 || ar.some((phi) => phi < -0.2) ? 44 : 28;
+  const base = span <= 100 || ar.some((phi) => phi < -0.2) ? 64 : 28;
   return Math.round(Math.min(200, base * Math.max(1, (1.3 * Math.sqrt(span)) / bandwidth)));
 }
 

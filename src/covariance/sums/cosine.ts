@@ -2,16 +2,16 @@ import { fft, type Matrix, matrix } from "../../numeric/index.js";
 import { dot } from "../shape/vectors.js";
 import { copyRows, type Series } from "./series.js";
 
-/** Below this many products n·ν the coefficients are summed as they stand. */
+/** Up to this many products n·ν the coefficients are summed as they stand. */
 const DIRECT = 2_000_000;
 
 /**
  * (n/ν) Σ_{j ≤ ν} Λ_j Λ_j' with Λ_j = √(2/n) Σ_t v_t cos(πj(t − ½)/n): the equal-weighted cosine estimate on the scale of a
  * sum over n periods.
  */
-export function cosineSum(series: Series, nu: number): Matrix {
+export function cosineSum(series: Series, nu: number, direct = DIRECT): Matrix {
   const { rows: n, columns: k } = series.columns;
-  const coefficients = n * nu <= DIRECT ? directly(series, nu) : byChirp(series, nu);
+  const coefficients = n * nu <= direct ? directly(series, nu) : byChirp(series, nu);
   const result = matrix(k, k);
   for (let j = 0; j < k; j++) {
     for (let i = 0; i <= j; i++) {

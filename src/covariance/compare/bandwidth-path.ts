@@ -54,7 +54,7 @@ export function bandwidthPath(m: Fitted, term: string, options: BandwidthPathOpt
       rule,
       kernel,
       rawScores(regression, scores),
-      scores.span,
+      scores,
       "bandwidthPath",
     );
     return { rule: ruleTitle(rule), bandwidth, se: root(weighted(gamma, kernel, bandwidth)) };

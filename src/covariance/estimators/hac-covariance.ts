@@ -43,7 +43,7 @@ export function hacCovariance(regression: Regression, request: HacRequest): Cova
   const raw = whitened
     ? inRawUnits(regression, scores, whitened.series, whitened.loading)
     : rawScores(regression, scores);
-  const chosen = chooseBandwidth(request.bandwidth, kernel, raw, span, request.asked);
+  const chosen = chooseBandwidth(request.bandwidth, kernel, raw, scores, request.asked);
   const { bandwidth } = chosen;
   const sum = whitened
     ? whitened.recolour(kernelSum(whitened.series, kernel, bandwidth))

@@ -51,12 +51,12 @@ export interface ChosenBandwidth {
   readonly remarks: readonly Remark[];
 }
 
-/** The bandwidth that a number or a rule gives on these scores, over `span` calendar periods. */
+/** The bandwidth that a number or a rule gives on these scores of a sample of T periods over `span` calendar ones. */
 export function chooseBandwidth(
   wanted: number | BandwidthRule,
   kernel: Kernel,
   scores: RawScores,
-  span: number,
+  { T, span }: { readonly T: number; readonly span: number },
   asked: string,
 ): ChosenBandwidth {
   if (typeof wanted === "number") {
@@ -70,7 +70,7 @@ export function chooseBandwidth(
   }
   const rule = ruleTitle(wanted);
   if (wanted === "square-root" || wanted === "cube-root") {
-    const bandwidth = wanted === "square-root" ? squareRootBandwidth(scores.T) : cubeRootBandwidth(scores.T);
+    const bandwidth = wanted === "square-root" ? squareRootBandwidth(T) : cubeRootBandwidth(T);
     return { bandwidth: Math.min(bandwidth, span), rule, fromData: false, details: {}, remarks: [] };
   }
   const found = wanted === "andrews" ? andrews(kernel, scores) : neweyWest1994(kernel, scores);

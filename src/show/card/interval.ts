@@ -44,7 +44,7 @@ function zeroMark(axis: Axis): Html {
 export function drawInterval(axis: Axis, interval: Interval, look: IntervalLook = {}): Html {
   const { estimate, low, high } = interval;
   const box = (inner: Html) =>
-    html`<div style="position:relative;height:${look.height ?? "1.85em"};min-width:9em">${zeroMark(axis)}${inner}</div>`;
+    html`<div style="position:relative;height:${look.height ?? "1.85em"};min-width:8em">${zeroMark(axis)}${inner}</div>`;
   if (Number.isNaN(low) || Number.isNaN(high)) return box(trusted(""));
   const colour = look.colour ?? colours.blue;
   const sure = low > 0 || high < 0;
@@ -98,7 +98,7 @@ export function drawSpan(axis: Axis, span: Span): Html {
     half: `<span style="${place};border:2px solid ${colour};border-left:5px solid ${colour};box-sizing:border-box;width:10px;height:10px;border-radius:50%"></span>`,
     none: `<span style="${place};width:6px;height:6px;border:2px solid ${colour};border-radius:50%;box-sizing:content-box"></span>`,
   }[span.filled];
-  return html`<div style="position:relative;height:1.85em;min-width:9em">${zeroMark(axis)}${trusted(line(span.outer, 1.5) + line(span.inner, 4) + beyond + (point >= 0 && point <= 100 ? mark : ""))}</div>`;
+  return html`<div style="position:relative;height:1.85em;min-width:8em">${zeroMark(axis)}${trusted(line(span.outer, 1.5) + line(span.inner, 4) + beyond + (point >= 0 && point <= 100 ? mark : ""))}</div>`;
 }
 
 /** The figures on an axis, for the heading of the column that intervals are drawn in. */
@@ -111,5 +111,5 @@ export function axisHead(axis: Axis, title: string): Html {
     zero < 0 || zero > 100
       ? `<span style="position:absolute;${zero < 0 ? "left" : "right"}:0">${zero < 0 ? "← 0" : "0 →"}</span>`
       : "";
-  return html`<div style="font-weight:bold;white-space:normal">${title}</div><div style="position:relative;height:1.3em;min-width:9em;font-weight:normal;opacity:0.8">${trusted(aside + axis.ticks.map(label).join(""))}</div>`;
+  return html`<div style="font-weight:bold;white-space:normal">${title}</div><div style="position:relative;height:1.3em;min-width:8em;font-weight:normal;opacity:0.8">${trusted(aside + axis.ticks.map(label).join(""))}</div>`;
 }

@@ -1,7 +1,6 @@
-import type { TopLevelSpec } from "vega-lite";
 import { Result } from "../../data/index.js";
 import { drawSvg } from "./draw.js";
-import { type ChartSource, dressed } from "./spec.js";
+import { type ChartSource, dressed, type VegaLite } from "./spec.js";
 
 /** A chart of a result: interactive where Vega-Lite is drawn, SVG elsewhere, words in a terminal. */
 export class Chart extends Result {
@@ -10,7 +9,7 @@ export class Chart extends Result {
   /** What it shows, in words and figures. */
   readonly description: string;
   /** The Vega-Lite specification (version 5), data included. */
-  readonly spec: TopLevelSpec;
+  readonly spec: VegaLite;
   /** Kind of the result it was made of, and which of that kind's charts it is. */
   readonly of: string;
   readonly which: string;

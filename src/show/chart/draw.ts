@@ -1,5 +1,5 @@
-import type { TopLevelSpec } from "vega-lite";
 import { slim } from "./slim.js";
+import type { VegaLite } from "./spec.js";
 import { textWidth } from "./text-metrics.js";
 
 // Vega and Vega-Lite take 0.7 s to load: at the first chart, not at the start of the kernel.
@@ -8,18 +8,23 @@ let loading: Promise<readonly [typeof import("vega"), typeof import("vega-lite")
 let queue: Promise<unknown> = Promise.resolve();
 
 /** Draws a Vega-Lite specification to SVG. It can load nothing: its data are in it. */
-export function drawSvg(spec: TopLevelSpec): Promise<string> {
+export function drawSvg(spec: VegaLite): Promise<string> {
   loading ??= Promise.all([import("vega"), import("vega-lite")]);
   const drawn = queue.then(() => draw(spec));
   queue = drawn.catch(() => undefined);
   return drawn;
 }
 
-async function draw(spec: TopLevelSpec): Promise<string> {
+async function draw(spec: VegaLite): Promise<string> {
   const [vega, vegaLite] = await loading!;
   const logger = vega.logger(vega.Error);
   // A copy: Vega marks the rows of the data that it is given, and a chart's specification is to stay as it is.
-  const compiled = vegaLite.compile(structuredClone(spec), { logger });
+  const compiled = vegaLite.compile(
+    structuredClone(spec) as unknown as Parameters<typeof vegaLite.compile>[0],
+    {
+      logger,
+    },
+  );
   const loader = vega.loader();
   const refuse = () => Promise.reject(new Error("a chart loads nothing"));
   Object.assign(loader, { load: refuse, sanitize: refuse, http: refuse, file: refuse });

@@ -1,5 +1,7 @@
-import type { TopLevelSpec } from "vega-lite";
 import { lineGrey, seriesColours, textGrey } from "./colours.js";
+
+/** A whole Vega-Lite specification; not by Vega-Lite's own type, which every session would have to read as it starts. */
+export type VegaLite = Readonly<Record<string, unknown>>;
 
 /** A chart before it is dressed: a Vega-Lite specification without schema, background and configuration. */
 export type ChartBody = Record<string, unknown>;
@@ -80,7 +82,7 @@ const config = {
 };
 
 /** A complete Vega-Lite specification, for JupyterLab. */
-export function dressed({ body, description, legend }: ChartSource): TopLevelSpec {
+export function dressed({ body, description, legend }: ChartSource): VegaLite {
   return complete({
     description,
     ...(legend === undefined ? {} : { title: { text: legend, fontSize: 12 } }),
@@ -89,14 +91,14 @@ export function dressed({ body, description, legend }: ChartSource): TopLevelSpe
 }
 
 /** A chart's pictures for a card, which says the legend in text of its own. */
-export function pictures({ body, panels }: ChartSource): TopLevelSpec[] {
+export function pictures({ body, panels }: ChartSource): VegaLite[] {
   return (panels ?? [body]).map(complete);
 }
 
 // By way of JSON, so that what is drawn here is what JupyterLab is sent: no undefined fields, null for NaN.
-function complete(body: ChartBody): TopLevelSpec {
+function complete(body: ChartBody): VegaLite {
   const spec = { $schema: schema, background: "transparent", ...body, config };
-  return JSON.parse(JSON.stringify(spec)) as TopLevelSpec;
+  return JSON.parse(JSON.stringify(spec)) as VegaLite;
 }
 
 /**

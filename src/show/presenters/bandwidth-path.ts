@@ -15,7 +15,7 @@ function rules(m: BandwidthPath): TableModel {
       { key: "rule", title: "Rule" },
       { key: "bandwidth", title: "Bandwidth", align: "decimal" },
       { key: "se", title: "SE", align: "decimal" },
-      { key: "ratio", title: "over classical", align: "decimal" },
+      { key: "ratio", title: "× classical", align: "decimal" },
     ],
     rows: m.marks.map(({ rule, bandwidth, se }) => [
       words(rule),
@@ -32,7 +32,7 @@ function path(m: BandwidthPath): TableModel {
     columns: [
       { key: "bandwidth", title: "Bandwidth", align: "right" },
       { key: "se", title: "SE", align: "decimal" },
-      { key: "ratio", title: "over classical", align: "decimal" },
+      { key: "ratio", title: "× classical", align: "decimal" },
     ],
     rows: Array.from(m.bandwidths, (bandwidth, i) => [
       rounded(bandwidth),

@@ -20,10 +20,10 @@ function linesTable(m: Checkup): TableModel {
     columns: [
       { key: "question", title: "Question" },
       { key: "verdict", title: "Verdict" },
-      { key: "decides", title: "Decided by", wrap: true },
+      { key: "decides", title: "Decided by", wrap: 8 },
       { key: "adjusted", title: "p, adjusted", align: "decimal" },
-      { key: "matters", title: `What it means for ${name(m.coefficient, 30)}`, wrap: true },
-      { key: "next", title: "To run next", wrap: true },
+      { key: "matters", title: `What it means for ${name(m.coefficient, 30)}`, wrap: 8 },
+      { key: "next", title: "To run next", wrap: 8 },
     ],
     rows: m.lines.map((line): Cell[] => [
       words(line.question),

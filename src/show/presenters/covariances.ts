@@ -44,7 +44,7 @@ function summary(m: Covariances): TableModel {
     columns: [
       { key: "term", title: "Term" },
       { key: "estimate", title: "Estimate", align: "decimal" },
-      { key: "ratio", title: "SE over classical", align: "right" },
+      { key: "ratio", title: "SE × classical", align: "right" },
       { key: "p", title: "p", align: "right" },
       { key: "holds", title: "Differs from zero" },
     ],
@@ -82,13 +82,13 @@ function estimatorsTable(m: Covariances, row: Row): TableModel {
   return {
     title: `${name(row.term)}, estimate ${number(row.estimate)}`,
     columns: [
-      { key: "estimator", title: "Estimator" },
+      { key: "estimator", title: "Estimator", wrap: 10 },
       { key: "se", title: "SE", align: "decimal" },
-      { key: "ratio", title: "over classical", align: "decimal" },
+      { key: "ratio", title: "× classical", align: "decimal" },
       { key: "low", title: "from", group, align: "decimal" },
       { key: "high", title: "to", group, align: "decimal" },
       { key: "p", title: "p", align: "decimal" },
-      { key: "law", title: "Law", wrap: true },
+      { key: "law", title: "Law", wrap: 6 },
     ],
     rows: row.intervals.map((interval): Cell[] => [
       sentence(m.estimators[interval.estimator]!.label),
@@ -148,7 +148,7 @@ function drawnSummary(m: Covariances): Html[] {
 function summaryPart(m: Covariances): Part {
   const table = summary(m);
   const head = axisHead(commonAxis(m), "In classical standard errors");
-  const drawn = { head, cells: drawnSummary(m), width: "12em" };
+  const drawn = { head, cells: drawnSummary(m), width: "9em" };
   const legend = html`<div style="font-size:0.85em;opacity:0.8">thick: narrowest interval · thin: widest interval · filled: differs from zero under all, half: under some, ring: under none</div>`;
   const part = tablePart(table, htmlTable(table, { at: 1, drawn }));
   return { ...part, html: html`${part.html}${legend}` };
@@ -173,7 +173,7 @@ function coefficientPart(m: Covariances, row: Row, open: boolean, drawnToo: bool
   const cells = row.intervals.map(({ low, high }) =>
     drawInterval(axis, { estimate: row.estimate, low, high }, { height: "1.75em" }),
   );
-  const drawn = { head: axisHead(axis, name(row.term)), cells, width: "12em" };
+  const drawn = { head: axisHead(axis, ""), cells, width: "9em" };
   const title = `${name(row.term)}: differs from zero ${held(row)}, SE ${range(
     judged(row).map(({ ratio }) => ratio),
     (x) => significant(x, 3),

@@ -12,6 +12,7 @@ import type { TableModel } from "../table/model.js";
 import { count, levelText, number, significant } from "../text/figures.js";
 import { name } from "../text/legible.js";
 import { listed } from "../text/listed.js";
+import { estimatorFacts } from "./estimator-facts.js";
 
 function coefficientTable(m: Fit): TableModel {
   return {
@@ -32,7 +33,7 @@ function coefficientPart(m: Fit): Part {
   const cells = m.coefficients.map((row, j) => drawInterval(axis, scale(row, factors[j]!)));
   return tablePart(
     table,
-    htmlTable(table, { at: 1, drawn: { head: axisHead(axis, title), cells, width: "11em" } }),
+    htmlTable(table, { at: 1, drawn: { head: axisHead(axis, title), cells, width: "9em" } }),
   );
 }
 
@@ -74,11 +75,7 @@ function details(m: Fit): Part {
     ["Condition number", number(m.regression.condition, 3)],
     ...(filled > 0 ? [["Periods on filled values", count(filled)] as const] : []),
     ...(left.length > 0 ? [["Periods left out", leftText(m)] as const] : []),
-    ...(m.perfect
-      ? []
-      : Object.entries(m.covariance.details).map(
-          ([key, said]): Fact => [detailLabel(key), detailText(said)],
-        )),
+    ...(m.perfect ? [] : estimatorFacts(m.covariance.details)),
     ...m.table.provenance.map((line, i): Fact => [`Data, step ${i + 1}`, line]),
   ];
   return factsPart(facts, "About this fit");
@@ -95,18 +92,6 @@ function leftText(m: Fit): string {
       return `${said.join(", ")}${more} (${reason})`;
     })
     .join("; ");
-}
-
-// `negativeVariance` reads as `negative variance`.
-function detailLabel(key: string): string {
-  const text = key.replace(/([a-z])([A-Z])/g, "$1 $2").toLowerCase();
-  return text.charAt(0).toUpperCase() + text.slice(1);
-}
-
-function detailText(value: number | string | boolean | null): string {
-  if (typeof value === "number") return number(value, 5);
-  if (typeof value === "boolean") return value ? "yes" : "no";
-  return value ?? "none";
 }
 
 /** A fit: its coefficients under the estimator that is on, each with its interval drawn. */

@@ -23,9 +23,9 @@ function testsTable(m: Integration): TableModel {
       { key: "test", title: "Test" },
       { key: "lags", title: "Lags", align: "right" },
       { key: "statistic", title: "Statistic", align: "decimal" },
-      { key: "law", title: "Law", wrap: true },
+      { key: "law", title: "Law", wrap: 6 },
       { key: "p", title: "p", align: "decimal" },
-      { key: "note", title: "Note", wrap: true },
+      { key: "note", title: "Note", wrap: 8 },
     ],
     rows: m.series.flatMap(({ column, tests }) =>
       tests.map((test): Cell[] => [

@@ -14,7 +14,7 @@ function testTable(m: JointTest): TableModel {
       { key: "restrictions", title: "Restrictions", align: "right" },
       { key: "wald", title: "Wald", align: "decimal" },
       { key: "statistic", title: "Wald per restriction", align: "decimal" },
-      { key: "law", title: "Law", wrap: true },
+      { key: "law", title: "Law", wrap: 6 },
       { key: "p", title: "p", align: "decimal" },
     ],
     rows: [[counted(m.q), statistic(m.wald), statistic(m.statistic), sentence(m.law), probability(m.p)]],

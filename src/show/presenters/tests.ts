@@ -21,9 +21,9 @@ export function testsTable(title: string, tests: readonly Test[]): TableModel {
       { key: "test", title: "Test" },
       ...(lags ? [{ key: "lags", title: "Lags", align: "right" } as const] : []),
       { key: "statistic", title: "Statistic", align: "decimal" },
-      { key: "law", title: "Law", wrap: true },
+      { key: "law", title: "Law", wrap: 6 },
       { key: "p", title: "p", align: "decimal" },
-      ...(notes ? [{ key: "note", title: "Note", wrap: true }] : []),
+      ...(notes ? [{ key: "note", title: "Note", wrap: 8 }] : []),
     ],
     rows: tests.map((test): Cell[] => [
       sentence(test.name),

@@ -35,7 +35,7 @@ function columnsTable(table: TimeTable): TableModel {
       { key: "low", title: "Lowest", align: "right" },
       { key: "high", title: "Highest", align: "right" },
       { key: "missing", title: "Missing", align: "right" },
-      ...(missing ? [{ key: "where", title: "Missing where", wrap: true }] : []),
+      ...(missing ? [{ key: "where", title: "Missing where", wrap: 8 }] : []),
       ...(filled ? [{ key: "filled", title: "Filled", align: "right" } as const] : []),
     ],
     rows: columns.map((column): Cell[] => {

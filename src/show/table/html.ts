@@ -25,7 +25,7 @@ export interface HtmlTableOptions {
 }
 
 const line = "1px solid rgba(128,128,128,0.35)";
-const base = "padding:0.2em 0.6em";
+const base = "padding:0.2em 0.5em";
 const sides = { left: "text-align:left", right: "text-align:right", decimal: "text-align:right" };
 
 /**
@@ -91,10 +91,8 @@ function data(content: Html, column: Column, first: boolean, cell: Cell): Html {
   const full = typeof cell.value === "string" && cell.value !== cell.text && cell.value.length <= 300;
   const title = full && html` title="${cell.value as string}"`;
   // Long names and sentences may break, also in the middle of a word; figures and short names never.
-  const long = align === "left" && cell.text.length > (column.wrap ? 14 : 40);
-  const wrapping = long
-    ? `min-width:${column.wrap ? 8 : 16}em;overflow-wrap:break-word`
-    : "white-space:nowrap";
+  const long = align === "left" && cell.text.length > (column.wrap ? 1.5 * column.wrap : 40);
+  const wrapping = long ? `min-width:${column.wrap ?? 14}em;overflow-wrap:break-word` : "white-space:nowrap";
   const style = `${base};${sides[align]};${wrapping}`;
   return first
     ? html`<th scope="row"${title} style="${style};font-weight:normal">${content}</th>`

@@ -15,8 +15,8 @@ export interface Column {
   readonly title: string;
   /** `decimal` lines figures up at their decimal point. Default `left`. */
   readonly align?: "left" | "right" | "decimal";
-  /** Whether its texts may always be broken into lines; otherwise only long ones are. */
-  readonly wrap?: boolean;
+  /** Its texts may be broken into lines of at least so many em; without it only long ones are. */
+  readonly wrap?: number;
   /** Neighbouring columns of one group stand under one heading. */
   readonly group?: string;
 }

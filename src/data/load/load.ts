@@ -13,7 +13,7 @@ import { placed, RowProblem } from "./problem.js";
 import type { RawColumn, RawTable } from "./raw-table.js";
 import { type Cell, fromRows } from "./rows.js";
 import { tabulate } from "./tabulate.js";
-import { readWorkbook } from "./workbook.js";
+import { readWorkbook, type Sheet } from "./workbook.js";
 
 /** A file, a query on a DuckDB or SQLite file, or an array of rows. */
 export type LoadSource =
@@ -57,11 +57,13 @@ async function loadFile(path: string, options: LoadOptions): Promise<TimeTable> 
         lineOf = line;
         return { columns, findings, description: path, fingerprint };
       }
-      const [columns, fingerprint] = await Promise.all([
+      const [content, fingerprint] = await Promise.all([
         reader(path, options, onRows),
         fileFingerprint(path),
       ]);
-      return { columns, findings: [], description: path, fingerprint };
+      if (Array.isArray(content)) return { columns: content, findings: [], description: path, fingerprint };
+      lineOf = async (row) => content.lineOf(row);
+      return { ...content, description: path, fingerprint };
     };
     return await tabulated(read, path, options, (row) => lineOf?.(row));
   } finally {
@@ -88,7 +90,7 @@ async function tabulated(
 
 const databases = [".duckdb", ".db", ".sqlite", ".sqlite3"];
 
-type Reader = (path: string, options: LoadOptions, onRows: OnRows) => Promise<RawColumn[]>;
+type Reader = (path: string, options: LoadOptions, onRows: OnRows) => Promise<RawColumn[] | Sheet>;
 
 const readers: Readonly<Record<string, Reader>> = {
   ".parquet": readParquet,

@@ -28,7 +28,7 @@ export interface LoadOptions {
   readonly text?: readonly string[];
   /** Names of the columns of a delimited file that has no header line. */
   readonly names?: readonly string[];
-  /** Lines of a delimited file to pass over before the header. Default 0. */
+  /** Lines of a delimited file, or rows of a workbook, to pass over before the header. Default 0. */
   readonly skip?: number;
   /** Delimiter of a delimited file; found out without it. */
   readonly delimiter?: string;

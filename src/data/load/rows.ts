@@ -28,9 +28,14 @@ export function fromRows(rows: readonly Readonly<Record<string, Cell>>[], option
 
 /**
  * Makes one column of cells of mixed origin; the kind of the first cell that is not missing decides. Throws RowProblem
- * for a cell of another kind, and for a whole number too large for a double.
+ * for a cell of another kind, and for a whole number too large for a double. `dates` says what a Date stands for.
  */
-export function columnOfCells(name: string, cells: readonly Cell[], options: LoadOptions): RawColumn {
+export function columnOfCells(
+  name: string,
+  cells: readonly Cell[],
+  options: LoadOptions,
+  dates: "instants" | "wall times" = "instants",
+): RawColumn {
   const missing = missingTexts(options);
   const isMissing = (cell: Cell) =>
     cell === null ||
@@ -39,7 +44,7 @@ export function columnOfCells(name: string, cells: readonly Cell[], options: Loa
     (typeof cell === "string" && missing.has(cell.trim()));
   const where = `column ${JSON.stringify(name)}`;
   const first = cells.find((cell) => !isMissing(cell));
-  if (first instanceof Date) return columnOfDates(name, cells, isMissing);
+  if (first instanceof Date) return columnOfDates(name, cells, isMissing, dates);
   const isTime = name === options.time;
   if (typeof first === "string" || options.text?.includes(name) || (isTime && typeof first !== "number")) {
     const values = cells.map((cell, row) => {
@@ -61,7 +66,12 @@ export function columnOfCells(name: string, cells: readonly Cell[], options: Loa
     }
     if (typeof cell === "number" || typeof cell === "bigint") return Number(cell);
     if (typeof cell === "boolean" && typeof first === "boolean") return cell ? 1 : 0;
-    throw new RowProblem(row, where, `${shown(cell)} is not a number, but the cells before are.`);
+    throw new RowProblem(
+      row,
+      where,
+      `${shown(cell)} is not a number, but the cells before are. ` +
+        `Name it in missing: [${shown(cell)}, ...] if it stands for a missing value, or keep the column as text with text: [${JSON.stringify(name)}].`,
+    );
   });
   return { name, kind: typeof first === "boolean" ? "boolean" : "number", values };
 }
@@ -71,7 +81,12 @@ function shown(cell: Cell): string {
 }
 
 /** Dates are days when all of them are midnights in UTC, and instants otherwise. */
-function columnOfDates(name: string, cells: readonly Cell[], isMissing: (cell: Cell) => boolean): RawColumn {
+function columnOfDates(
+  name: string,
+  cells: readonly Cell[],
+  isMissing: (cell: Cell) => boolean,
+  dates: "instants" | "wall times",
+): RawColumn {
   const values = Float64Array.from(cells, (cell, row) => {
     if (isMissing(cell)) return Number.NaN;
     if (cell instanceof Date && !Number.isNaN(cell.getTime())) return cell.getTime();
@@ -82,5 +97,11 @@ function columnOfDates(name: string, cells: readonly Cell[], isMissing: (cell: C
     );
   });
   const days = values.every((value) => Number.isNaN(value) || value % 86_400_000 === 0);
-  return { name, kind: "instant", values, form: days ? "date" : "date-time", offset: !days };
+  return {
+    name,
+    kind: "instant",
+    values,
+    form: days ? "date" : "date-time",
+    offset: !days && dates === "instants",
+  };
 }

@@ -97,3 +97,22 @@ test("LZ4: long columns, in several blocks, with matches that run into themselve
   const x = table.numbers("x");
   assert.ok(x.every((value, i) => value === (i % 1000 < 500 ? 7 : i / 3)));
 });
+
+test("hours.xlsx: whole hours on the stated clock, a blank row passed over, the sheet's row in errors", async () => {
+  const options = { time: "hour", skip: 2, zone: "Europe/Oslo" };
+  await assert.rejects(
+    load(path("hours.xlsx"), { time: "hour" }),
+    /column 2 of sheet "Sheet" .* has no name.*skip: 2/,
+  );
+  await assert.rejects(
+    load(path("hours.xlsx"), options),
+    /row 9 \(line 13\) of .*column "count": "eight" is not a number/,
+  );
+  const table = await load(path("hours.xlsx"), { ...options, missing: ["eight"] });
+  assert.deepEqual(
+    [table.periods[0], table.periods[8]],
+    ["2024-10-26 16:00+02:00", "2024-10-27 00:00+02:00"],
+  );
+  assert.deepEqual(Array.from(table.numbers("count")), [0, 1, Number.NaN, 3, 4, 5, 6, 7, Number.NaN]);
+  assert.equal(table.findings[0]!.text, "1 blank row was passed over");
+});

@@ -71,3 +71,17 @@ json.dump({
     "day": [d.isoformat() for d in days], "x": x, "n": n, "cents": [float(c) for c in cents],
     "flag": [None if f is None else int(f) for f in flag], "place": place,
 }, open("expected.json", "w", encoding="utf-8"), ensure_ascii=False, indent=1)
+
+# Times in a workbook are fractions of a day; blank rows, a title above the names, an error value.
+book = openpyxl.Workbook()
+sheet = book.active
+sheet.append(["Counts at the quay"])
+sheet.append([])
+sheet.append(["hour", "count"])
+for i in range(8):
+    sheet.append([dt.datetime(2024, 10, 26, i + 16), i])
+    if i == 4:
+        sheet.append([None, None])
+sheet["B6"] = "#N/A"
+sheet.append([dt.datetime(2024, 10, 27, 0), "eight"])
+book.save("hours.xlsx")

@@ -1,22 +1,17 @@
-import {
-  countedSteps,
-  parsePeriod,
-  parsePeriodEnd,
-  periodLabel,
-  type Remark,
-  requireRegular,
-  spanText,
-  type TimeIndex,
-  type TimeTable,
-} from "../data/index.js";
+import { type Remark, requireRegular, spanText, type TimeIndex, type TimeTable } from "../data/index.js";
 import { InputError, type Matrix, matrix } from "../numeric/index.js";
-import { columnsOf, flatten } from "./resolve.js";
+import { copyRows, refuseConstant } from "./columns.js";
+import { checkNames, interceptLabel } from "./names.js";
+import { designRemarks } from "./remarks.js";
+import { columnsOf, requireOptions } from "./resolve.js";
+import { type Sample, sampleRows } from "./sample.js";
 import type { TermColumn, TermLike } from "./term.js";
+import { type LeftOut, usableRows } from "./usable.js";
 
 /** Options of a design. */
 export interface DesignOptions {
-  /** First and last period used; either may be null. Default: all periods. */
-  readonly sample?: readonly [from: string | number | null, to: string | number | null];
+  /** First and last period used, both included; either may be null. Lags reach back before it. Default: all periods. */
+  readonly sample?: Sample;
   /** Whether a constant is among the columns. Default true. */
   readonly intercept?: boolean;
   /** `"leave out"`: periods with a missing value inside the sample are left out and counted. Refused without it. */
@@ -37,22 +32,23 @@ export interface Design {
   /** Ordinals of the T periods used, on the axis of `index`. */
   readonly periods: Float64Array;
   readonly index: TimeIndex;
-  /** Whether a lag of the outcome is among the terms. */
+  /** Whether an earlier value of the outcome is among the terms. */
   readonly laggedOutcome: boolean;
   /** Periods of the sample that are not used, and why. */
-  readonly left: readonly { readonly ordinal: number; readonly reason: string }[];
-  /** Values used that were filled in and not observed. */
+  readonly left: readonly LeftOut[];
+  /** Periods used that rest on values that were filled in and not observed. */
   readonly filled: number;
   readonly remarks: readonly Remark[];
 }
 
-/** The label of the constant. */
-export const interceptLabel = "intercept";
+/** Names of the options of a design. */
+export const designOptionNames = ["sample", "intercept", "missing"] as const;
 
 /**
  * The regression of `outcome` on `terms` as numbers. Periods before a lag or after a lead can be formed fall out and
  * are stated; a value missing inside the sample is refused unless `missing: "leave out"`. Throws InputError naming
- * the column and period of whatever is wrong.
+ * the column and period of whatever is wrong: an unknown or doubled name, text, a missing or infinite value, a column
+ * that does not vary, no more periods than coefficients.
  */
 export function design(
   table: TimeTable,
@@ -60,183 +56,96 @@ export function design(
   terms: TermLike | readonly TermLike[],
   options: DesignOptions = {},
 ): Design {
+  requireOptions("fit", options, designOptionNames);
+  const { intercept = true, missing } = options;
+  if (typeof intercept !== "boolean")
+    throw new InputError(`fit: intercept is true or false, not ${JSON.stringify(intercept)}.`);
+  if (missing !== undefined && missing !== "leave out")
+    throw new InputError(`fit: missing can only be "leave out", not ${JSON.stringify(missing)}.`);
   requireRegular(table.index, "fit");
-  const left = outcomeColumn(table, outcome);
-  const right = flatten(terms).flatMap((term) => columnsOf(term, table));
-  const intercept = options.intercept ?? true;
+  const left = forFit(() => columnsOf(outcome, table));
+  const right = forFit(() => columnsOf(terms, table));
   checkNames(left, right, intercept);
-  if (right.length === 0 && !intercept) throw new InputError("fit: there are no terms and no intercept.");
-  const inSample = sampleRows(table, options.sample);
-  const { rows, lost } = usableRows(table, [left, ...right], inSample, options);
-  const T = rows.length;
+  const [y] = left as [TermColumn];
+  const columns = [y, ...right];
+  const usable = usableRows(table, columns, sampleRows(table, options.sample), missing === "leave out");
+  const { rows } = usable;
   const k = right.length + (intercept ? 1 : 0);
-  if (T <= k) {
-    throw new InputError(
-      `fit: ${T} ${T === 1 ? "period" : "periods"} for ${k} ${k === 1 ? "coefficient" : "coefficients"}. A fit needs more periods than coefficients: use fewer terms or a longer sample.`,
-    );
-  }
-  const X = matrix(T, k);
-  if (intercept) X.data.fill(1, 0, T);
-  const shift = intercept ? 1 : 0;
-  right.forEach((column, j) => {
-    const target = X.data.subarray((j + shift) * T, (j + shift + 1) * T);
-    copyChecked(table, column, rows, target);
-  });
-  const y = new Float64Array(T);
-  copyChecked(table, left, rows, y);
-  const filled = countFilledIn(table, [left, ...right], rows);
+  requireRows(rows.length, k, usable.left);
+  const periods = new Float64Array(rows.length);
+  copyOrdinals(table.index.ordinals, rows, periods);
+  const filled = countFilled(columns, rows);
   return {
-    outcome: left.label,
-    y,
-    X,
+    outcome: y.label,
+    ...numbers(table, y, right, rows, intercept, spanText({ ...table.index, ordinals: periods })),
     terms: [...(intercept ? [interceptLabel] : []), ...right.map(({ label }) => label)],
     interceptAt: intercept ? 0 : -1,
-    periods: Float64Array.from(rows, (row) => table.index.ordinals[row]!),
+    periods,
     index: table.index,
-    laggedOutcome: right.some(
-      (column) => column.past && column.uses.some((name) => left.uses.includes(name)),
-    ),
-    left: lost,
+    laggedOutcome: right.some((column) => holdsPast(column, y)),
+    left: usable.left,
     filled,
-    remarks: remarksOn(table, rows, lost, filled, right),
+    remarks: designRemarks(table, columns, rows, usable.left, filled),
   };
 }
 
-function outcomeColumn(table: TimeTable, outcome: TermLike): TermColumn {
-  const columns = columnsOf(outcome, table);
-  if (columns.length !== 1)
-    throw new InputError(`fit: the outcome must be one series, not ${columns.length}.`);
-  return columns[0]!;
-}
-
-function checkNames(left: TermColumn, right: readonly TermColumn[], intercept: boolean): void {
-  const seen = new Set<string>();
-  for (const { label } of right) {
-    if (label === left.label)
-      throw new InputError(`fit: the outcome ${JSON.stringify(label)} is also among the terms.`);
-    if (intercept && label === interceptLabel) {
-      throw new InputError(
-        `fit: a column called "intercept" would clash with the fit's own; rename it, or say intercept: false.`,
-      );
-    }
-    if (seen.has(label)) throw new InputError(`fit: the term ${JSON.stringify(label)} is given twice.`);
-    seen.add(label);
+// What a term refuses on its own says which term; what the table refuses does not say that a fit asked.
+function forFit<T>(make: () => T): T {
+  try {
+    return make();
+  } catch (error) {
+    if (error instanceof InputError && !/^[\w Δ]+: /.test(error.message))
+      throw new InputError(`fit: ${error.message}`);
+    throw error;
   }
 }
 
-function sampleRows(table: TimeTable, sample: DesignOptions["sample"]): number[] {
-  const { ordinals } = table.index;
-  const [from, to] = sample ?? [null, null];
-  const first = from === null ? Number.NEGATIVE_INFINITY : parsePeriod(table.index, from);
-  const last = to === null ? Number.POSITIVE_INFINITY : parsePeriodEnd(table.index, to);
-  const rows: number[] = [];
-  for (let row = 0; row < table.T; row++)
-    if (ordinals[row]! >= first && ordinals[row]! <= last) rows.push(row);
-  if (rows.length > 0) return rows;
+function requireRows(T: number, k: number, left: readonly LeftOut[]): void {
+  if (T > k) return;
+  const why =
+    left.length > 0 ? ` (${left.length} left out: ${left[0]!.reason}${left.length > 1 ? ", ..." : ""})` : "";
   throw new InputError(
-    `fit: no period lies in the sample ${from ?? "start"} to ${to ?? "end"}; the table spans ${spanText(table.index)}.`,
+    `fit: ${T} ${T === 1 ? "period" : "periods"}${why} for ${k} ${k === 1 ? "coefficient" : "coefficients"}. A fit needs more periods than coefficients: use fewer terms or a longer sample.`,
   );
 }
 
-function usableRows(
+function numbers(
   table: TimeTable,
-  columns: readonly TermColumn[],
-  inSample: readonly number[],
-  options: DesignOptions,
-): { rows: Int32Array; lost: Design["left"] } {
-  const rows: number[] = [];
-  const lost: { ordinal: number; reason: string }[] = [];
-  const inside = new Map<string, number[]>();
-  for (const row of inSample) {
-    let reason = "";
-    for (const column of columns) {
-      if (!Number.isNaN(column.values[row]!)) continue;
-      if (column.edge?.[row]) reason ||= `${column.label} reaches beyond the table`;
-      else {
-        reason = `${column.label} is missing`;
-        const list = inside.get(column.label);
-        if (list) list.push(row);
-        else inside.set(column.label, [row]);
-      }
-    }
-    if (reason) lost.push({ ordinal: table.index.ordinals[row]!, reason });
-    else rows.push(row);
-  }
-  if (inside.size > 0 && options.missing !== "leave out")
-    refuseMissing(table, inside, inSample.length, columns);
-  return { rows: Int32Array.from(rows), lost };
-}
-
-function refuseMissing(
-  table: TimeTable,
-  inside: ReadonlyMap<string, readonly number[]>,
-  periods: number,
-  columns: readonly TermColumn[],
-): never {
-  const parts = [...inside].map(([label, rows]) => {
-    const shown = rows
-      .slice(0, 3)
-      .map((row) => `${periodLabel(table.index, table.index.ordinals[row]!)}, row ${row + 1}`);
-    return `"${label}" is missing in ${rows.length} of ${periods} periods (${rows.length > 3 ? "first " : ""}${shown.join("; ")})`;
+  y: TermColumn,
+  right: readonly TermColumn[],
+  rows: Int32Array,
+  intercept: boolean,
+  span: string,
+): { y: Float64Array; X: Matrix } {
+  const T = rows.length;
+  const shift = intercept ? 1 : 0;
+  const X = matrix(T, right.length + shift);
+  if (intercept) X.data.fill(1, 0, T);
+  const outcome = new Float64Array(T);
+  copyRows(table, y, rows, outcome);
+  right.forEach((column, j) => {
+    const target = X.data.subarray((j + shift) * T, (j + shift + 1) * T);
+    copyRows(table, column, rows, target);
+    refuseConstant(column.label, target, intercept, span);
   });
-  const names = [...new Set(columns.filter(({ label }) => inside.has(label)).flatMap(({ uses }) => uses))];
-  const name = names[0] ?? [...inside.keys()][0]!;
-  throw new InputError(
-    `fit: ${parts.join("; ")}. Leave these periods out with missing: "leave out", or fill them first with ` +
-      `.fill(${JSON.stringify(name)}, "linear").`,
-  );
+  return { y: outcome, X };
 }
 
-function copyChecked(table: TimeTable, column: TermColumn, rows: Int32Array, target: Float64Array): void {
-  for (let i = 0; i < rows.length; i++) {
-    const value = column.values[rows[i]!]!;
-    if (value === Number.POSITIVE_INFINITY || value === Number.NEGATIVE_INFINITY) {
-      const row = rows[i]!;
-      throw new InputError(
-        `fit: "${column.label}" is infinite in ${periodLabel(table.index, table.index.ordinals[row]!)} (row ${row + 1}). Mend it or leave it missing.`,
-      );
-    }
-    target[i] = value;
-  }
+function copyOrdinals(ordinals: Float64Array, rows: Int32Array, target: Float64Array): void {
+  for (let i = 0; i < rows.length; i++) target[i] = ordinals[rows[i]!]!;
 }
 
-function countFilledIn(table: TimeTable, columns: readonly TermColumn[], rows: Int32Array): number {
-  const names = new Set(columns.flatMap(({ uses }) => uses));
+function countFilled(columns: readonly TermColumn[], rows: Int32Array): number {
+  const marked = columns.flatMap(({ filled }) => (filled ? [filled] : []));
+  if (marked.length === 0) return 0;
   let count = 0;
-  for (const name of names) {
-    const { filled } = table.column(name);
-    if (filled) for (const row of rows) count += filled[row]!;
-  }
+  for (const row of rows) if (marked.some((flags) => flags[row] === 1)) count++;
   return count;
 }
 
-function remarksOn(
-  table: TimeTable,
-  rows: Int32Array,
-  lost: Design["left"],
-  filled: number,
-  right: readonly TermColumn[],
-): Remark[] {
-  const remarks: Remark[] = [];
-  const reasons = new Map<string, number>();
-  for (const { reason } of lost) reasons.set(reason, (reasons.get(reason) ?? 0) + 1);
-  for (const [reason, count] of reasons) {
-    const severity = reason.endsWith("is missing") ? "caution" : "note";
-    remarks.push({ severity, text: `${countedSteps(count, table.index.step)} left out: ${reason}` });
-  }
-  const { ordinals } = table.index;
-  const span = ordinals[rows[rows.length - 1]!]! - ordinals[rows[0]!]! + 1;
-  const absent = span - rows.length;
-  if (absent > 0) {
-    remarks.push({
-      severity: "caution",
-      text: `${countedSteps(absent, table.index.step)} inside the sample ${absent === 1 ? "is" : "are"} not used; lagged products are taken in time, never across the gap`,
-    });
-  }
-  if (filled > 0)
-    remarks.push({ severity: "caution", text: `${filled} of the values used were filled in, not observed` });
-  for (const note of new Set(right.flatMap((column) => (column.note ? [column.note] : [])))) {
-    remarks.push({ severity: "note", text: note });
-  }
-  return remarks;
+// Later than the newest value that the outcome itself is made of would not be its past.
+function holdsPast(term: TermColumn, outcome: TermColumn): boolean {
+  return term.uses.some((use) =>
+    outcome.uses.some(({ column, newest }) => column === use.column && use.oldest > newest),
+  );
 }

@@ -1,18 +1,20 @@
-export { type Design, type DesignOptions, design, interceptLabel } from "./design.js";
-export { columnsOf, labelOf } from "./resolve.js";
-export { isTerm, type Term, type TermColumn, type TermLike } from "./term.js";
-export {
-  between,
-  fourier,
-  pulse,
-  ramp,
-  type SeasonalOptions,
-  seasonal,
-  step,
-  trend,
-} from "./terms/calendar.js";
+export { type Design, type DesignOptions, design, designOptionNames } from "./design.js";
+export type { Labelled } from "./label.js";
+export { interceptLabel } from "./names.js";
+export { columnsOf, labelOf, requireOptions } from "./resolve.js";
+export type { Sample } from "./sample.js";
+export { isTerm, type Term, type TermColumn, type TermLike, type Use } from "./term.js";
+export { type CategoryOptions, categories } from "./terms/categories.js";
+export { between, pulse, ramp, step } from "./terms/dated.js";
 export { type DifferenceOptions, diff, growth } from "./terms/difference.js";
-export { categories, own } from "./terms/groups.js";
+export { fourier } from "./terms/fourier.js";
+export { log } from "./terms/log.js";
+export { own } from "./terms/own.js";
+export { product } from "./terms/product.js";
 export { rolling } from "./terms/rolling.js";
+export { type SeasonalOptions, seasonal } from "./terms/seasonal.js";
 export { lag, lags, lead } from "./terms/shift.js";
-export { log, product, standardise, times } from "./terms/transform.js";
+export { standardise } from "./terms/standardise.js";
+export { times } from "./terms/times.js";
+export { trend } from "./terms/trend.js";
+export type { LeftOut } from "./usable.js";

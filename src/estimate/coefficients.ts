@@ -23,9 +23,9 @@ export function judgedCoefficients(
   regression: Regression,
   covariance: Covariance | undefined,
   level: number,
-): Coefficient[] {
+): readonly Coefficient[] {
   const { coefficients, k, terms } = regression;
-  return terms.map((term, j): Coefficient => {
+  const rows = terms.map((term, j): Coefficient => {
     const estimate = coefficients[j]!;
     const variance = covariance?.matrix.data[j * k + j] ?? Number.NaN;
     if (!covariance || !(variance > 0)) return { term, estimate, ...unjudged };
@@ -45,6 +45,7 @@ export function judgedCoefficients(
       p: law.twoSided(statistic),
     };
   });
+  return Object.freeze(rows.map((row) => Object.freeze(row)));
 }
 
 const unjudged = { se: Number.NaN, statistic: Number.NaN, low: Number.NaN, high: Number.NaN, p: Number.NaN };

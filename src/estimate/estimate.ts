@@ -1,8 +1,15 @@
 import type { TimeTable } from "../data/index.js";
-import { type DesignOptions, design, type TermLike } from "../design/index.js";
+import {
+  type DesignOptions,
+  design,
+  designOptionNames,
+  requireOptions,
+  type TermLike,
+} from "../design/index.js";
 import { requireLevel } from "./coefficients.js";
 import type { CovarianceEstimator } from "./covariance-estimator.js";
 import { type ErrorModel, requireErrorModel } from "./errors.js";
+import { requireEstimator } from "./estimator-required.js";
 import { Fit, type FitParts } from "./fit.js";
 import { regress } from "./regress.js";
 
@@ -16,7 +23,10 @@ export interface FitOptions extends DesignOptions {
   readonly level?: number;
 }
 
-/** A regression of `outcome` on `terms` by least squares, judged by `estimator` unless the options name another. */
+/**
+ * A regression of `outcome` on `terms` by least squares, judged by `estimator` unless the options name another. Throws
+ * InputError for options that are not known, and for whatever `design` and `regress` refuse.
+ */
 export function estimate(
   table: TimeTable,
   outcome: TermLike,
@@ -25,17 +35,12 @@ export function estimate(
   estimator: CovarianceEstimator,
   watch: NonNullable<FitParts["watch"]> = [],
 ): Fit {
-  const level = options.level ?? 0.95;
+  requireOptions("fit", options, ["covariance", "errors", "level", ...designOptionNames]);
+  const { covariance = estimator, errors, level = 0.95, ...forDesign } = options;
   requireLevel(level);
-  requireErrorModel(options.errors);
-  const made = design(table, outcome, terms, options);
+  requireErrorModel(errors);
+  requireEstimator("fit", covariance);
+  const made = design(table, outcome, terms, forDesign);
   const regression = regress(made);
-  return new Fit({
-    table,
-    design: made,
-    regression,
-    estimator: options.covariance ?? estimator,
-    level,
-    watch,
-  });
+  return new Fit({ table, design: made, regression, estimator: covariance, level, watch });
 }

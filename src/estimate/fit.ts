@@ -1,9 +1,12 @@
 import { periodLabel, type Remark, Result, spanText, suggestion, type TimeTable } from "../data/index.js";
-import type { Design } from "../design/index.js";
-import { InputError, norm } from "../numeric/index.js";
+import { columnsOf, type Design, type TermLike } from "../design/index.js";
+import { InputError } from "../numeric/index.js";
 import { type Coefficient, judgedCoefficients, requireLevel } from "./coefficients.js";
 import type { Covariance, CovarianceEstimator } from "./covariance-estimator.js";
+import { requireEstimator } from "./estimator-required.js";
 import { fitRecord } from "./fit-record.js";
+import { fitRemarks } from "./fit-remarks.js";
+import { Goodness } from "./goodness.js";
 import type { LeastSquaresFit } from "./regress.js";
 
 /** What a fit was asked to be, as JSON. */
@@ -11,9 +14,13 @@ export interface Specification {
   readonly outcome: string;
   readonly terms: readonly string[];
   readonly intercept: boolean;
+  /** First and last period used. */
   readonly sample: readonly [string, string];
   readonly errors: string;
 }
+
+/** Looks at a regression and may have something to remark on it. */
+export type Watcher = (regression: LeastSquaresFit) => Remark | undefined;
 
 /** Everything a fit is made of. */
 export interface FitParts {
@@ -23,12 +30,21 @@ export interface FitParts {
   readonly estimator: CovarianceEstimator;
   readonly level: number;
   /** Rooms above this one may have something to remark on a regression; asked when the remarks are first read. */
-  readonly watch?: readonly ((regression: LeastSquaresFit) => Remark | undefined)[];
+  readonly watch?: readonly Watcher[];
+}
+
+// What fits that differ in estimator or level alone have in common.
+interface Shared {
+  readonly goodness: Goodness;
+  periods?: readonly string[];
+  residuals?: Float64Array;
+  fitted?: Float64Array;
+  watched?: readonly Remark[];
 }
 
 /**
- * A fitted regression under a covariance estimator. Immutable: `under` puts another estimator on and re-estimates
- * nothing.
+ * A fitted regression of T periods on k terms, under a covariance estimator. Immutable: `under` puts another estimator
+ * on and re-estimates nothing. Whatever rests on the estimator is computed when it is first asked for.
  */
 export class Fit extends Result {
   override readonly kind = "fit";
@@ -38,12 +54,13 @@ export class Fit extends Result {
   readonly estimator: CovarianceEstimator;
   /** Level of the intervals, such as 0.95. */
   readonly level: number;
-  readonly #watch: NonNullable<FitParts["watch"]>;
-  #watched: readonly Remark[] | undefined;
+  readonly #watch: readonly Watcher[];
+  readonly #shared: Shared;
   #covariance: Covariance | undefined;
   #coefficients: readonly Coefficient[] | undefined;
+  #remarks: readonly Remark[] | undefined;
 
-  constructor(parts: FitParts) {
+  constructor(parts: FitParts, like?: Fit) {
     super();
     this.table = parts.table;
     this.design = parts.design;
@@ -51,6 +68,8 @@ export class Fit extends Result {
     this.estimator = parts.estimator;
     this.level = parts.level;
     this.#watch = parts.watch ?? [];
+    this.#shared = like ? like.#shared : { goodness: new Goodness(parts.regression) };
+    Object.freeze(this);
   }
 
   get outcome(): string {
@@ -72,19 +91,25 @@ export class Fit extends Result {
     return this.regression.terms;
   }
 
-  /** Labels of the periods used. */
-  get periods(): string[] {
-    return Array.from(this.regression.periods, (ordinal) => periodLabel(this.design.index, ordinal));
+  /** Labels of the T periods used. */
+  get periods(): readonly string[] {
+    this.#shared.periods ??= Object.freeze(
+      Array.from(this.regression.periods, (ordinal) => periodLabel(this.design.index, ordinal)),
+    );
+    return this.#shared.periods;
   }
 
-  /** y − Xβ̂ over `periods`. */
+  /** y − Xβ̂ over `periods`, a copy. */
   get residuals(): Float64Array {
-    return this.regression.residuals;
+    this.#shared.residuals ??= this.regression.residuals.slice();
+    return this.#shared.residuals;
   }
 
   /** Xβ̂ over `periods`. */
   get fitted(): Float64Array {
-    return this.regression.y.map((value, t) => value - this.regression.residuals[t]!);
+    const { y, residuals } = this.regression;
+    this.#shared.fitted ??= y.map((value, t) => value - residuals[t]!);
+    return this.#shared.fitted;
   }
 
   /** Residual sum of squares. */
@@ -99,36 +124,35 @@ export class Fit extends Result {
 
   /** Share of the outcome's variation explained: about its mean with a constant among the columns, about zero without. */
   get rSquared(): { readonly value: number; readonly about: "mean" | "zero" } {
-    const { y } = this.regression;
-    const about = this.#hasConstant() ? "mean" : "zero";
-    const centre = about === "mean" ? y.reduce((sum, value) => sum + value, 0) / this.T : 0;
-    const total = y.reduce((sum, value) => sum + (value - centre) ** 2, 0);
-    return { value: 1 - this.rss / total, about };
+    return this.#shared.goodness.rSquared;
   }
 
   /** Gaussian log-likelihood with σ² at rss / T. */
   get logLikelihood(): number {
-    return (-this.T / 2) * (Math.log(2 * Math.PI) + Math.log(this.rss / this.T) + 1);
+    return this.#shared.goodness.logLikelihood;
   }
 
   /** −2ℓ + 2(k + 1); σ² counts as a parameter. */
   get aic(): number {
-    return -2 * this.logLikelihood + 2 * (this.k + 1);
+    return this.#shared.goodness.aic;
   }
 
   /** −2ℓ + (k + 1) log T. */
   get bic(): number {
-    return -2 * this.logLikelihood + (this.k + 1) * Math.log(this.T);
+    return this.#shared.goodness.bic;
   }
 
   /** Whether the residuals are zero to rounding, so that nothing can be said of their spread or dependence. */
   get perfect(): boolean {
-    const { residuals, y, T } = this.regression;
-    return norm(residuals) <= T * Number.EPSILON * norm(y);
+    return this.#shared.goodness.perfect;
   }
 
-  /** The coefficients' covariance under the present estimator. */
+  /** The coefficients' covariance under the present estimator. Throws InputError for a perfect fit, which has none. */
   get covariance(): Covariance {
+    if (this.perfect)
+      throw new InputError(
+        "the fit is perfect to rounding: its coefficients have no covariance to estimate.",
+      );
     this.#covariance ??= this.estimator.on(this.regression);
     return this.#covariance;
   }
@@ -143,35 +167,40 @@ export class Fit extends Result {
     return this.#coefficients;
   }
 
-  /** One coefficient by its term's label. Throws InputError, suggesting the nearest. */
-  coefficient(term: string): Coefficient {
-    const found = this.coefficients.find((row) => row.term === term);
+  /**
+   * One coefficient by its label, or by the term itself: `m.coefficient("fare (t−1)")`, `m.coefficient(lag("fare"))`. An
+   * ordinary hyphen does for the minus sign. Throws InputError, suggesting the nearest.
+   */
+  coefficient(term: TermLike): Coefficient {
+    const label = typeof term === "string" ? term : this.#labelOf(term);
+    const signed = label.replace(/\(t-(\d+)\)/g, "(t\u2212$1)");
+    const found =
+      this.coefficients.find((row) => row.term === label) ??
+      this.coefficients.find((row) => row.term === signed);
     if (found) return found;
-    throw new InputError(`the fit has no term ${JSON.stringify(term)}.${suggestion(term, this.terms)}`);
+    throw new InputError(`the fit has no term ${JSON.stringify(label)}.${suggestion(label, this.terms)}`);
   }
 
   /** The same fit under another covariance estimator. */
   under(estimator: CovarianceEstimator): Fit {
-    return new Fit({ ...this.#parts(), estimator });
+    requireEstimator("under", estimator);
+    return new Fit({ ...this.#parts(), estimator }, this);
   }
 
-  /** The same fit with intervals of another level, such as 0.9. */
+  /** The same fit with intervals of another level, such as 0.9. Throws InputError for what is no level. */
   at(level: number): Fit {
     requireLevel(level);
-    return new Fit({ ...this.#parts(), level });
+    return new Fit({ ...this.#parts(), level }, this);
   }
 
   get specification(): Specification {
-    const { terms, interceptAt } = this.regression;
-    const periods = this.regression.periods;
+    const { terms, interceptAt, periods } = this.regression;
+    const name = (ordinal: number) => periodLabel(this.design.index, ordinal);
     return {
       outcome: this.outcome,
       terms: terms.filter((_, j) => j !== interceptAt),
       intercept: interceptAt >= 0,
-      sample: [
-        periodLabel(this.design.index, periods[0]!),
-        periodLabel(this.design.index, periods[periods.length - 1]!),
-      ],
+      sample: [name(periods[0]!), name(periods[periods.length - 1]!)],
       errors: "iid",
     };
   }
@@ -181,25 +210,10 @@ export class Fit extends Result {
     return this.table.fingerprint;
   }
 
-  /** What the reader of the card must know, of the design, the arithmetic and the estimator. */
+  /** What the reader of the card must know, of the design, the arithmetic, the estimator and the errors. */
   get remarks(): readonly Remark[] {
-    const remarks: Remark[] = [...this.design.remarks];
-    if (this.perfect) {
-      remarks.push({
-        severity: "caution",
-        text: "the fit is perfect to rounding: standard errors, intervals and tests of the residuals mean nothing",
-      });
-    } else {
-      this.#watched ??= this.#watch.flatMap((look) => look(this.regression) ?? []);
-      remarks.push(...this.covariance.remarks, ...this.#watched);
-    }
-    if (this.regression.condition > 1e7) {
-      remarks.push({
-        severity: "caution",
-        text: `the terms nearly depend on one another (condition number ${this.regression.condition.toExponential(1)})`,
-      });
-    }
-    return remarks;
+    this.#remarks ??= Object.freeze([...fitRemarks(this), ...this.#watched()]);
+    return this.#remarks;
   }
 
   /** Span of the periods used, as cards write it. */
@@ -216,16 +230,15 @@ export class Fit extends Result {
     return { table, design, regression, estimator, level, watch: this.#watch };
   }
 
-  #hasConstant(): boolean {
-    if (this.regression.interceptAt >= 0) return true;
-    // A full set of levels spans the constant too: ‖1 − QQ'1‖ is then zero.
-    const { Q, T, k } = this.regression;
-    let projected = 0;
-    for (let j = 0; j < k; j++) {
-      let sum = 0;
-      for (let t = 0; t < T; t++) sum += Q.data[j * T + t]!;
-      projected += sum * sum;
-    }
-    return Math.abs(T - projected) < 1e-12 * T;
+  #watched(): readonly Remark[] {
+    if (this.perfect) return [];
+    this.#shared.watched ??= this.#watch.flatMap((look) => look(this.regression) ?? []);
+    return this.#shared.watched;
+  }
+
+  #labelOf(term: TermLike): string {
+    const labels = columnsOf(term, this.table).map(({ label }) => label);
+    if (labels.length === 1) return labels[0]!;
+    throw new InputError(`coefficient: ${labels.join(", ")} are ${labels.length} terms; name one of them.`);
   }
 }

@@ -1,0 +1,91 @@
+import { periodLabel, type TimeTable } from "../data/index.js";
+import { refuseMissing } from "./missing.js";
+import type { TermColumn } from "./term.js";
+
+/** A period of the sample that is not used. */
+export interface LeftOut {
+  readonly ordinal: number;
+  readonly reason: string;
+  /** Whether a value was missing, or a lag or lead reached beyond the table. */
+  readonly missing: boolean;
+}
+
+/** The rows that can be used, and the periods of the sample that cannot. */
+export interface Usable {
+  readonly rows: Int32Array;
+  readonly left: readonly LeftOut[];
+}
+
+const beyond = 1;
+const missing = 2;
+
+/**
+ * The rows of the table from `start` up to `end` in which no column is missing. Refuses values missing inside the
+ * sample unless they may be left out.
+ */
+export function usableRows(
+  table: TimeTable,
+  columns: readonly TermColumn[],
+  { start, end }: { start: number; end: number },
+  leaveOut: boolean,
+): Usable {
+  const flags = new Uint8Array(end - start);
+  const lacking = new Map<TermColumn, number[]>();
+  const reaching: { column: TermColumn; count: number }[] = [];
+  for (const column of columns) {
+    const { values, edge } = column;
+    const inside: number[] = [];
+    let count = 0;
+    for (let row = start; row < end; row++) {
+      if (!Number.isNaN(values[row]!)) continue;
+      if (edge?.[row]) {
+        flags[row - start]! |= beyond;
+        count++;
+      } else {
+        flags[row - start]! |= missing;
+        inside.push(row);
+      }
+    }
+    if (inside.length > 0) lacking.set(column, inside);
+    if (count > 0) reaching.push({ column, count });
+  }
+  if (lacking.size > 0 && !leaveOut) refuseMissing(table, lacking, { start, end });
+  reaching.sort((a, b) => b.count - a.count);
+  const left: LeftOut[] = [];
+  const rows = new Int32Array(end - start);
+  let used = 0;
+  for (let row = start; row < end; row++) {
+    const flag = flags[row - start]!;
+    if (flag === 0) rows[used++] = row;
+    else {
+      const isMissing = (flag & missing) !== 0;
+      const reason = isMissing ? missingReason(lacking, row) : beyondReason(reaching, row, table);
+      left.push({ ordinal: table.index.ordinals[row]!, reason, missing: isMissing });
+    }
+  }
+  return { rows: rows.subarray(0, used), left };
+}
+
+function missingReason(lacking: ReadonlyMap<TermColumn, readonly number[]>, row: number): string {
+  const labels = [...lacking.keys()]
+    .filter(({ values, edge }) => Number.isNaN(values[row]!) && !edge?.[row])
+    .map(({ label }) => label);
+  const named = labels.slice(0, 3).join(", ") + (labels.length > 3 ? `, and ${labels.length - 3} more` : "");
+  return `${named} ${labels.length === 1 ? "is" : "are"} missing`;
+}
+
+// Of several lags that reach beyond the table, the longest is the one that costs the period.
+function beyondReason(
+  reaching: readonly { column: TermColumn }[],
+  row: number,
+  { index }: TimeTable,
+): string {
+  const { column } = reaching.find(
+    ({ column: { values, edge } }) => Number.isNaN(values[row]!) && edge?.[row],
+  )!;
+  const { ordinals } = index;
+  const leading = column.edge!.indexOf(0);
+  if (row < leading || leading === -1)
+    return `${column.label} reaches back before ${periodLabel(index, ordinals[0]!)}`;
+  return `${column.label} reaches beyond ${periodLabel(index, ordinals[ordinals.length - 1]!)}`;
+}

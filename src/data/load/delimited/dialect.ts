@@ -31,6 +31,7 @@ export async function sniffDialect(
 ): Promise<Dialect> {
   const { bytes, size } = await readStart(path);
   if (size === 0) throw new InputError(`load: ${path} is empty.`);
+  requireText(path, bytes);
   const whole = bytes.length >= size;
   const written = encoding ?? encodingOf(bytes, whole);
   let text = withoutLines(new Decoder(written).piece(bytes), options.skip ?? 0);
@@ -71,6 +72,22 @@ async function readStart(path: string): Promise<{ bytes: Buffer; size: number }>
   } finally {
     await file.close();
   }
+}
+
+/** What other files begin with, and what to do with them. */
+const others: readonly (readonly [start: string, what: string])[] = [
+  ["\x1f\x8b", "packed with gzip; unpack it first"],
+  ["PK\x03\x04", "a zip archive or a workbook; unpack it, or end its name in .xlsx"],
+  ["PAR1", "a Parquet file; end its name in .parquet"],
+  ["ARROW1", "an Arrow file; end its name in .arrow"],
+  ["SQLite format 3", "a SQLite file; give a query, as in load({ database, sql }, ...)"],
+  ["%PDF-", "a PDF, which holds no table that can be read"],
+];
+
+function requireText(path: string, bytes: Buffer): void {
+  const start = bytes.toString("latin1", 0, 16);
+  const other = others.find(([magic]) => start.startsWith(magic));
+  if (other) throw new InputError(`load: ${path} is ${other[1]}.`);
 }
 
 function encodingOf(bytes: Buffer, whole: boolean): Encoding {

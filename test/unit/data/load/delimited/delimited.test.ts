@@ -254,3 +254,9 @@ test("long files say markers and blank lines as short ones do", async () => {
   ]);
   assert.equal(table.numbers("a")[149_999], 149_999 / 3);
 });
+
+test("what is no text is named for what it is", async () => {
+  await refuses(Buffer.from("1f8b0800", "hex"), /is packed with gzip; unpack it first/);
+  await refuses("PAR1....", /is a Parquet file; end its name in \.parquet/);
+  await refuses("PK\u0003\u0004", /a zip archive or a workbook/);
+});

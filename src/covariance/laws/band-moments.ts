@@ -24,7 +24,8 @@ export function higherMoments(
   bandwidth: number,
   images: Float64Array,
 ): { third: number; fourth: number } | undefined {
-  const { squares, basis } = design;
+  const { basis } = design;
+  const squares = design.squares();
   const n = squares.length;
   if (kernel.name === "daniell") return undefined;
   const reach = kernel.finite ? lastLag(kernel, bandwidth, n) : Math.ceil(REACH * bandwidth);

@@ -16,7 +16,7 @@ export interface ContrastDesign {
   readonly rank: number;
   readonly places?: Int32Array;
   /** w_t². */
-  readonly squares: Float64Array;
+  readonly squares: () => Float64Array;
   /** Σ_t w_t² w_{t−j}² for every lag j. */
   readonly squareProducts: () => Float64Array;
 }
@@ -34,11 +34,14 @@ export function designOf(
   rank: number,
   places?: Int32Array,
 ): ContrastDesign {
-  const squares = new Float64Array(weights.length);
-  for (let t = 0; t < weights.length; t++) squares[t] = weights[t]! * weights[t]!;
+  let held: Float64Array | undefined;
+  const squares = (): Float64Array => {
+    held ??= weights.map((w) => w * w);
+    return held;
+  };
   let products: Float64Array | undefined;
   const squareProducts = (): Float64Array => {
-    products ??= autocovariances(squares, weights.length - 1);
+    products ??= autocovariances(squares(), weights.length - 1);
     return products;
   };
   return { weights, basis, rank, squares, squareProducts, ...(places ? { places } : {}) };

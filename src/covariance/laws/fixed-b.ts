@@ -26,27 +26,46 @@ export interface FixedB {
 export type FixedBForm = "own design" | "limit" | "limit, uneven design";
 
 const designs = new WeakMap<Scores, Map<string, ContrastDesign>>();
+const uneven = new WeakMap<Scores, Map<string, number>>();
 
 /** The contrast's design, formed once per regression and contrast. */
 export function designFor(scores: Scores, contrast: Float64Array): ContrastDesign {
-  let ofScores = designs.get(scores);
-  if (!ofScores) {
-    ofScores = new Map();
-    designs.set(scores, ofScores);
+  return kept(designs, scores, contrast, () => contrastDesign(scores, contrast));
+}
+
+/** How uneven a contrast's design is; of a long one the number is kept and not the design. */
+function unevennessFor(scores: Scores, contrast: Float64Array): number {
+  return kept(uneven, scores, contrast, () =>
+    unevenness(
+      scores.span <= UNEVEN_DESIGN_UP_TO ? designFor(scores, contrast) : contrastDesign(scores, contrast),
+    ),
+  );
+}
+
+function kept<V>(
+  store: WeakMap<Scores, Map<string, V>>,
+  scores: Scores,
+  contrast: Float64Array,
+  make: () => V,
+): V {
+  let byContrast = store.get(scores);
+  if (!byContrast) {
+    byContrast = new Map();
+    store.set(scores, byContrast);
   }
   const key = contrast.join();
-  let design = ofScores.get(key);
-  if (!design) {
-    design = contrastDesign(scores, contrast);
-    if (ofScores.size > 200) ofScores.clear();
-    ofScores.set(key, design);
+  let value = byContrast.get(key);
+  if (value === undefined) {
+    value = make();
+    if (byContrast.size > 200) byContrast.clear();
+    byContrast.set(key, value);
   }
-  return design;
+  return value;
 }
 
 export function fixedBForm(scores: Scores, contrast: Float64Array, limit = false): FixedBForm {
   if (!limit && scores.span <= OWN_DESIGN_UP_TO) return "own design";
-  if (unevenness(designFor(scores, contrast)) <= UNEVEN) return "limit";
+  if (unevennessFor(scores, contrast) <= UNEVEN) return "limit";
   return !limit && scores.span <= UNEVEN_DESIGN_UP_TO ? "own design" : "limit, uneven design";
 }
 

@@ -2,24 +2,13 @@ import { columnOf } from "../../numeric/index.js";
 import type { ContrastDesign } from "./design.js";
 
 const SEGMENTS = 256;
-const known = new WeakMap<ContrastDesign, number>();
-
 /**
  * How far a contrast's design is from what the limit of fixed-b theory asks, second moments that grow evenly over
  * the sample: the largest ‖Σ_{t ≤ rT} w_t q_t − r Σ w_t q_t‖ over 256 values of r, w of unit length and q_t the rows of an
  * orthonormal basis. Zero for a constant, near 0.19 for the slope of a linear trend, of order T^(−1/2) for
  * stationary regressors.
  */
-export function unevenness(design: ContrastDesign): number {
-  let worst = known.get(design);
-  if (worst === undefined) {
-    worst = measure(design);
-    known.set(design, worst);
-  }
-  return worst;
-}
-
-function measure({ weights, basis }: ContrastDesign): number {
+export function unevenness({ weights, basis }: ContrastDesign): number {
   const n = weights.length;
   const segments = Math.min(SEGMENTS, n);
   const distances = new Float64Array(segments);

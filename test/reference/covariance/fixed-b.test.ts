@@ -101,6 +101,23 @@ test("laws on the design at hand: critical values to 3 decimals, p to 4, against
   }
 });
 
+test("the slope of a trend: 2.52, 3.53 and 5.79 at b = 0.1, 0.3 and 1, where stationary regressors have 2.23, 2.85, 4.77", () => {
+  // Figures of the project's methods page, by another implementation; at T = 1,000 they hold to their two decimals.
+  const T = 1000;
+  const trend = Float64Array.from({ length: T }, (_, t) => t);
+  const m = regressionOf([new Float64Array(T).fill(1), trend], autoregressive(T, 0, 9));
+  for (const [b, wanted] of [
+    [0.1, 2.52],
+    [0.3, 3.53],
+    [1, 5.79],
+  ] as const) {
+    const law = hac({ bandwidth: b * T, factor: false })
+      .on(m)
+      .reference(unit(2, 1));
+    assert.ok(Math.abs(law.critical(0.95) - wanted) < 0.015, `b = ${b}: ${law.critical(0.95)}`);
+  }
+});
+
 test("joint limit: percentage points of Wald/q within four of the two simulations' standard errors", () => {
   let compared = 0;
   for (const [key, byQ] of Object.entries(constants.fixed_b_joint_F.data)) {

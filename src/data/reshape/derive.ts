@@ -1,4 +1,4 @@
-import { type Column, pickRows } from "../column.js";
+import { type Column, pickNumbers, pickRows } from "../column.js";
 import { type TableParts, TimeTable } from "../table.js";
 
 /** A new table that differs from `table` in some parts, with one more line of provenance. */
@@ -15,7 +15,7 @@ export function derive(table: TimeTable, step: string, changes: Partial<TablePar
 
 /** The given rows (0-based) of a table, in that order. */
 export function takeRows(table: TimeTable, rows: ArrayLike<number>, step: string): TimeTable {
-  const ordinals = Float64Array.from(rows, (row) => table.index.ordinals[row]!);
+  const ordinals = pickNumbers(table.index.ordinals, rows);
   const columns: Column[] = table.columns.map((column) => pickRows(column, rows));
   return derive(table, step, { index: { ...table.index, ordinals }, columns });
 }

@@ -13,12 +13,14 @@ export function drop(table: TimeTable, names: readonly string[]): TimeTable {
 /** Without the rows in which any of the named columns (all, when none is named) is missing. */
 export function dropMissing(table: TimeTable, names: readonly string[]): TimeTable {
   const columns = names.length > 0 ? names.map((name) => table.column(name)) : table.columns;
-  const rows: number[] = [];
-  const lost: number[] = [];
-  for (let row = 0; row < table.T; row++) {
-    (columns.some((column) => isMissing(column, row)) ? lost : rows).push(row);
+  const lacks = new Uint8Array(table.T);
+  for (const column of columns) {
+    for (let row = 0; row < table.T; row++) if (isMissing(column, row)) lacks[row] = 1;
   }
+  const rows: number[] = [];
+  for (let row = 0; row < table.T; row++) if (lacks[row] === 0) rows.push(row);
+  const lost = table.T - rows.length;
   const label = (row: number) => periodLabel(table.index, table.index.ordinals[row]!);
-  const first = lost.length > 0 ? `, first ${label(lost[0]!)}` : "";
-  return takeRows(table, rows, `rows with a missing value dropped: ${lost.length}${first}`);
+  const first = lost > 0 ? `, first ${label(lacks.indexOf(1))}` : "";
+  return takeRows(table, rows, `rows with a missing value dropped: ${lost}${first}`);
 }

@@ -36,11 +36,7 @@ export function join(table: TimeTable, other: TimeTable, options: JoinOptions = 
         `table's (${stepName(table.index.step)}); bring it to one step first with .to("${stepName(table.index.step)}", { ... }).`,
     );
   }
-  const place = new Map(Array.from(other.index.ordinals, (ordinal, row) => [ordinal, row]));
-  const matches = Int32Array.from(table.index.ordinals, (ordinal) => {
-    const coarse = coarsePeriodOf(table.index, other.index.step, ordinal);
-    return coarse === undefined ? -1 : (place.get(coarse) ?? -1);
-  });
+  const matches = matchesOf(table, other);
   const unmatched = matches.reduce((count, row) => count + (row < 0 ? 1 : 0), 0);
   if (unmatched === table.T) {
     throw new InputError(`join: no period in common (${spanText(table.index)}; ${spanText(other.index)}).`);
@@ -57,6 +53,20 @@ export function join(table: TimeTable, other: TimeTable, options: JoinOptions = 
   if (unmatched === 0 || options.overhang !== "cut") return joined;
   const rows = Array.from(matches.keys()).filter((row) => matches[row]! >= 0);
   return takeRows(joined, rows, `rows without a match cut: ${unmatched}`);
+}
+
+/** For each row of `table` the row of `other` whose period holds it, or −1. Both are in order, so one walk finds all. */
+function matchesOf(table: TimeTable, other: TimeTable): Int32Array {
+  const matches = new Int32Array(table.T).fill(-1);
+  const { ordinals, step } = other.index;
+  let at = 0;
+  table.index.ordinals.forEach((ordinal, row) => {
+    const wanted = coarsePeriodOf(table.index, step, ordinal);
+    if (wanted === undefined) return;
+    while (at < ordinals.length && ordinals[at]! < wanted) at++;
+    if (ordinals[at] === wanted) matches[row] = at;
+  });
+  return matches;
 }
 
 function spread(column: Column, matches: Int32Array): Column {

@@ -2,6 +2,7 @@ import { createRequire } from "node:module";
 import { dirname, join } from "node:path";
 import { fileURLToPath } from "node:url";
 import type * as TypeScript from "@tslab/typescript-for-tslab";
+import { pathsFor, withoutOnDemand } from "./node-types.js";
 
 const require = createRequire(import.meta.url);
 const path = require.resolve("@tslab/typescript-for-tslab");
@@ -33,8 +34,8 @@ function takeMap(js: string): { code: string; map: string | undefined } {
 
 /**
  * Puts an object in the place of the TypeScript module that the converter reads, with other compiler options: types of
- * ESM packages resolve, checks are strict, source maps are kept, `lagbook` is found from any folder, and no files are
- * watched. The module's own files stay untouched.
+ * ESM packages resolve, checks are strict, source maps are kept, `lagbook` is found from any folder, Node's larger modules
+ * are read on demand, and no files are watched. The module's own files stay untouched.
  */
 export function adaptTypeScript(): void {
   const overrides: Record<string, unknown> = {
@@ -48,6 +49,7 @@ export function adaptTypeScript(): void {
         inlineSourceMap: true,
         baseUrl: packageFolder,
         paths: {
+          ...pathsFor(process.cwd()),
           lagbook: [join(packageFolder, "dist/src/index.d.ts")],
           "lagbook/notebook": [join(packageFolder, "dist/kernel/session/notebook.d.ts")],
         },
@@ -66,6 +68,7 @@ export function adaptTypeScript(): void {
       return { ...result, outputText: taken.code };
     },
     sys: Object.assign(Object.create(ts.sys), {
+      readFile: (path: string, encoding?: string) => withoutOnDemand(path, ts.sys.readFile(path, encoding)),
       watchFile: () => ({ close() {} }),
       watchDirectory: () => ({ close() {} }),
     }),

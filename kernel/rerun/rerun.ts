@@ -105,14 +105,21 @@ function allowsFailure(cell: Cell): boolean {
   return Array.isArray(tags) && tags.includes("raises-exception");
 }
 
+/** What the kernel says of its language, which Jupyter writes into every notebook that it runs. */
+export const languageInfo = {
+  name: "typescript",
+  version: "5.0.4",
+  mimetype: "text/x-typescript",
+  file_extension: ".ts",
+  pygments_lexer: "typescript",
+  codemirror_mode: { name: "javascript", typescript: true },
+  nbconvert_exporter: "script",
+};
+
 function withKernel(metadata: Record<string, unknown>): Record<string, unknown> {
   return {
     ...metadata,
     kernelspec: { name: "lagbook", display_name: "Lagbook", language: "typescript" },
-    language_info: metadata["language_info"] ?? {
-      name: "typescript",
-      file_extension: ".ts",
-      mimetype: "text/typescript",
-    },
+    language_info: languageInfo,
   };
 }

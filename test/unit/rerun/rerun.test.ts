@@ -2,7 +2,8 @@ import assert from "node:assert/strict";
 import { test } from "node:test";
 import type { Sent } from "../../../kernel/rerun/collector.js";
 import type { Cell, Notebook } from "../../../kernel/rerun/notebook.js";
-import { type CellReply, rerun } from "../../../kernel/rerun/rerun.js";
+import { type CellReply, languageInfo, rerun } from "../../../kernel/rerun/rerun.js";
+import { kernelInfo } from "../../../kernel/wire/kernel-info.js";
 
 const code = (source: string, metadata: Record<string, unknown> = {}): Cell => ({
   cell_type: "code",
@@ -114,4 +115,8 @@ test("the session is closed if it breaks", async () => {
   });
   await assert.rejects(rerun(notebook(code("one")), broken), /lost/);
   assert.deepEqual(log, ["<close>"]);
+});
+
+test("a rerun notebook names the language as the kernel does in Jupyter", () => {
+  assert.deepEqual(languageInfo, kernelInfo()["language_info"]);
 });

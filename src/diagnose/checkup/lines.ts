@@ -41,7 +41,6 @@ export function dependenceLine({ m, term }: Subject, found: Dependence): Checkup
     : inflation === undefined
       ? "not known"
       : `standard error of ${term} ${figure(Math.sqrt(inflation), 2)} times that under independent errors`;
-  const order = Math.max(1, found.inflation.order);
   const next = found.decisive?.note?.includes("alone") ? found.decisive.lags : 2;
   return {
     question: "dependence",
@@ -54,7 +53,7 @@ export function dependenceLine({ m, term }: Subject, found: Dependence): Checkup
       ? {
           attempt: m.regression.laggedOutcome
             ? fitCall(m, [`lag(${outcomeCode(m)}, ${next})`])
-            : fitCall(m, [], `{ errors: ar(${order}) }`),
+            : `covariances(m, undefined, { terms: [${JSON.stringify(term)}] })`,
         }
       : {}),
   };

@@ -44,7 +44,7 @@ test("each fault leads the list with a call to try", () => {
     checkup(fitted(regression(y, [ones(T), x], { terms: ["intercept", "fare"] }))).lines[0]!;
   const one = first(x.map((v, t) => v + dependent[t]!));
   assert.equal(one.question, "dependence");
-  assert.match(one.attempt!, /^fit\(table, "y", \["fare"\], \{ errors: ar\(\d\) \}\)$/);
+  assert.match(one.attempt!, /^covariances\(m, undefined, \{ terms: \["fare"\] \}\)$/);
   assert.match(one.matters, /standard error of fare [\d.]+ times/);
   const two = first(x.map((v, t) => v + uneven[t]!));
   assert.equal(two.question, "spread");

@@ -94,6 +94,9 @@ function columnFindings(column: Column, index: TimeIndex, label: (ordinal: numbe
   findings.push(...sentinelFinding(column));
   if (missing === 0) return findings;
   if (missing === T) return [...findings, { severity: "caution", text: `${name} is missing throughout` }];
+  if (column.kind === "text" && 2 * missing > T) {
+    return [...findings, { severity: "note", text: `${name} is missing in ${missing} of ${T} rows` }];
+  }
   let lead = 0;
   while (isMissing(column, lead)) lead++;
   let trail = 0;

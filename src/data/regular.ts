@@ -43,7 +43,10 @@ export function irregularities(index: TimeIndex): Remark[] {
   const duplicates = duplicatesOf(index);
   if (duplicates.length > 0) {
     const { ordinal, rows } = duplicates[0]!;
-    const others = duplicates.length > 1 ? ` (and ${duplicates.length - 1} more such periods)` : "";
+    const others =
+      duplicates.length > 1
+        ? ` (and ${duplicates.length - 1} more such ${duplicates.length === 2 ? "period" : "periods"})`
+        : "";
     findings.push({
       severity: "caution",
       text:

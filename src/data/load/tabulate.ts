@@ -94,7 +94,10 @@ function regular(table: TimeTable, walls: Float64Array, options: LoadOptions): T
     if (options.dedupe) result = result.dedupe(options.dedupe);
     else {
       const { rows } = duplicates[0]!;
-      const others = duplicates.length > 1 ? ` (and ${duplicates.length - 1} more such periods)` : "";
+      const others =
+        duplicates.length > 1
+          ? ` (and ${duplicates.length - 1} more such ${duplicates.length === 2 ? "period" : "periods"})`
+          : "";
       const period = written(table.index, walls, rows[0]!);
       said.push(
         `rows ${listRows(rows)} ${rows.length === 2 ? "both" : "all"} stand for ${period}${others}` +

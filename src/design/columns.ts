@@ -1,21 +1,23 @@
 import { periodLabel, type TimeTable } from "../data/index.js";
 import { InputError } from "../numeric/index.js";
 import type { TermColumn } from "./term.js";
+import type { Usable } from "./usable.js";
 
-/** The values of a column in some rows, into `target`. Refuses an infinite one, naming the period. */
-export function copyRows(table: TimeTable, column: TermColumn, rows: Int32Array, target: Float64Array): void {
+/** The values of a column in the usable rows, into `target`. Refuses an infinite one, naming the period. */
+export function copyRows(table: TimeTable, column: TermColumn, usable: Usable, target: Float64Array): void {
   const { values, label } = column;
+  const { rows, suspect } = usable;
   const n = rows.length;
   const start = rows[0]!;
   if (rows[n - 1]! - start === n - 1) target.set(values.subarray(start, start + n));
   else for (let i = 0; i < n; i++) target[i] = values[rows[i]!]!;
-  for (let i = 0; i < n; i++) {
-    if (target[i]! - target[i]! === 0) continue;
-    const row = rows[i]!;
-    throw new InputError(
-      `fit: "${label}" is infinite in ${periodLabel(table.index, table.index.ordinals[row]!)} (row ${row + 1}). Mend the value, or leave it missing.`,
-    );
-  }
+  const infinite = suspect.has(column) ? target.findIndex((value) => !Number.isFinite(value)) : -1;
+  if (infinite === -1) return;
+  const row = rows[infinite]!;
+  const period = periodLabel(table.index, table.index.ordinals[row]!);
+  throw new InputError(
+    `fit: "${label}" is infinite in ${period} (row ${row + 1}). Mend the value, or leave it missing.`,
+  );
 }
 
 /** Refuses a column that does not vary: one that is zero throughout, or one that repeats the intercept. */

@@ -6,7 +6,7 @@ import { designRemarks } from "./remarks.js";
 import { columnsOf, requireOptions } from "./resolve.js";
 import { type Sample, sampleRows } from "./sample.js";
 import type { TermColumn, TermLike } from "./term.js";
-import { type LeftOut, usableRows } from "./usable.js";
+import { type LeftOut, type Usable, usableRows } from "./usable.js";
 
 /** Options of a design. */
 export interface DesignOptions {
@@ -77,7 +77,7 @@ export function design(
   const filled = countFilled(columns, rows);
   return {
     outcome: y.label,
-    ...numbers(table, y, right, rows, intercept, spanText({ ...table.index, ordinals: periods })),
+    ...numbers(table, y, right, usable, intercept, spanText({ ...table.index, ordinals: periods })),
     terms: [...(intercept ? [interceptLabel] : []), ...right.map(({ label }) => label)],
     interceptAt: intercept ? 0 : -1,
     periods,
@@ -113,19 +113,19 @@ function numbers(
   table: TimeTable,
   y: TermColumn,
   right: readonly TermColumn[],
-  rows: Int32Array,
+  usable: Usable,
   intercept: boolean,
   span: string,
 ): { y: Float64Array; X: Matrix } {
-  const T = rows.length;
+  const T = usable.rows.length;
   const shift = intercept ? 1 : 0;
   const X = matrix(T, right.length + shift);
   if (intercept) X.data.fill(1, 0, T);
   const outcome = new Float64Array(T);
-  copyRows(table, y, rows, outcome);
+  copyRows(table, y, usable, outcome);
   right.forEach((column, j) => {
     const target = X.data.subarray((j + shift) * T, (j + shift + 1) * T);
-    copyRows(table, column, rows, target);
+    copyRows(table, column, usable, target);
     refuseConstant(column.label, target, intercept, span);
   });
   return { y: outcome, X };

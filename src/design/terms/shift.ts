@@ -19,24 +19,36 @@ function shift(term: TermLike, by: number, asked: string): Term {
   });
 }
 
-function moved(column: TermColumn, by: number, table: TimeTable): Omit<TermColumn, "label"> {
-  const { T } = table;
+function moved(column: TermColumn, by: number, { T, index }: TimeTable): Omit<TermColumn, "label"> {
   const values = new Float64Array(T).fill(Number.NaN);
   const edge = new Uint8Array(T);
   const filled = column.filled && new Uint8Array(T);
-  const rowOf = rowsByPeriod(table.index.ordinals);
-  for (let row = 0; row < T; row++) {
-    const source = rowOf(row, by);
-    if (source === -1) edge[row] = 1;
-    if (source < 0) continue;
-    values[row] = column.values[source]!;
-    if (column.edge) edge[row] = column.edge[source]!;
-    if (filled) filled[row] = column.filled![source]!;
+  const { ordinals } = index;
+  if (ordinals[T - 1]! - ordinals[0]! === T - 1) {
+    const from = Math.max(0, -by);
+    const to = Math.max(from, Math.min(T, T - by));
+    edge.fill(1);
+    if (to > from) {
+      values.set(column.values.subarray(from, to), from + by);
+      if (column.edge) edge.set(column.edge.subarray(from, to), from + by);
+      else edge.fill(0, from + by, to + by);
+      filled?.set(column.filled!.subarray(from, to), from + by);
+    }
+  } else {
+    const rowOf = rowsByPeriod(ordinals);
+    for (let row = 0; row < T; row++) {
+      const source = rowOf(row, by);
+      if (source === -1) edge[row] = 1;
+      if (source < 0) continue;
+      values[row] = column.values[source]!;
+      if (column.edge) edge[row] = column.edge[source]!;
+      if (filled) filled[row] = column.filled![source]!;
+    }
   }
-  const uses = column.uses.map((use) => ({
-    ...use,
-    newest: use.newest + by,
-    oldest: use.oldest + by,
+  const uses = column.uses.map(({ column, newest, oldest }) => ({
+    column,
+    newest: newest + by,
+    oldest: oldest + by,
   }));
   return { values, edge, filled, uses };
 }

@@ -14,9 +14,14 @@ export function trend(degree = 1): Term {
   return calendarTerm("trend", (index, ordinals) => {
     const start = index.ordinals[0]!;
     const note = `trend is 1 in ${periodLabel(index, start)}`;
-    return Array.from({ length: degree }, (_, i): TermColumn => {
-      const label = i === 0 ? "trend" : `trend${superscript(i + 1)}`;
-      return { label, values: ordinals.map((ordinal) => (ordinal - start + 1) ** (i + 1)), uses: [], note };
-    });
+    const columns: TermColumn[] = [];
+    for (let power = 1; power <= degree; power++) {
+      const before = columns[power - 2]?.values;
+      const values = new Float64Array(ordinals.length);
+      for (let row = 0; row < values.length; row++)
+        values[row] = (before ? before[row]! : 1) * (ordinals[row]! - start + 1);
+      columns.push({ label: power === 1 ? "trend" : `trend${superscript(power)}`, values, uses: [], note });
+    }
+    return columns;
   });
 }

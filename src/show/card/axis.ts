@@ -29,15 +29,25 @@ export function axisFor(
     to = Math.max(0, to);
   }
   if (from === to) [from, to] = [-1, 1];
-  const step = roundStep((to - from) / 3);
   // Room at both ends for the points and for the figures on the ticks.
   const margin = 0.06 * (to - from);
   const [start, end] = [from - margin, to + margin];
-  const ticks: number[] = [];
-  for (let n = Math.ceil(from / step - 1e-9); n * step <= to + 1e-9 * step; n++) {
-    ticks.push(Number((n * step).toPrecision(12)) + 0);
+  let step = roundStep((to - from) / 3);
+  let ticks = multiples(step, from, to);
+  // Zero alone gives no measure.
+  if (ticks.length < 2) {
+    step /= 2;
+    ticks = multiples(step, from, to);
   }
   return { from: start, to: end, ticks, position: (x) => (100 * (x - start)) / (end - start) };
+}
+
+function multiples(step: number, from: number, to: number): number[] {
+  const found: number[] = [];
+  for (let n = Math.ceil(from / step - 1e-9); n * step <= to + 1e-9 * step; n++) {
+    found.push(Number((n * step).toPrecision(12)) + 0);
+  }
+  return found;
 }
 
 /** The smallest of 1, 2, 2.5, 5 times a power of ten that is at least a given width. */

@@ -105,11 +105,19 @@ export function drawSpan(axis: Axis, span: Span): Html {
 export function axisHead(axis: Axis, title: string): Html {
   const label = (x: number) =>
     `<span style="position:absolute;${at(axis.position(x))};width:6em;margin-left:-3em;text-align:center;white-space:nowrap">${number(x, 3)}</span>`;
+  // From zero outwards, a tick is named where its name has room: the column may be as narrow as ten letters.
+  const ticks = [...axis.ticks].sort((a, b) => Math.abs(a) - Math.abs(b));
+  const named: number[] = [];
+  for (const tick of ticks) {
+    const room = Math.max(18, 8 * number(tick, 3).length);
+    if (named.every((other) => Math.abs(axis.position(other) - axis.position(tick)) >= room))
+      named.push(tick);
+  }
   // Where zero is not on the axis, its side is said.
   const zero = axis.position(0);
   const aside =
     zero < 0 || zero > 100
       ? `<span style="position:absolute;${zero < 0 ? "left" : "right"}:0">${zero < 0 ? "← 0" : "0 →"}</span>`
       : "";
-  return html`<div style="font-weight:bold;white-space:normal">${title}</div><div style="position:relative;height:1.3em;min-width:8em;font-weight:normal;opacity:0.8">${trusted(aside + axis.ticks.map(label).join(""))}</div>`;
+  return html`<div style="font-weight:bold;white-space:normal">${title}</div><div style="position:relative;height:1.3em;min-width:8em;font-weight:normal;opacity:0.8">${trusted(aside + named.map(label).join(""))}</div>`;
 }

@@ -173,7 +173,8 @@ function coefficientPart(m: Covariances, row: Row, open: boolean, drawnToo: bool
   const cells = row.intervals.map(({ low, high }) =>
     drawInterval(axis, { estimate: row.estimate, low, high }, { height: "1.75em" }),
   );
-  const drawn = { head: axisHead(axis, ""), cells, width: "9em" };
+  // What room there is goes to the names: an interval needs less than a long name on five lines.
+  const drawn = { head: axisHead(axis, ""), cells, width: "10em", stretch: false };
   const title = `${name(row.term)}: differs from zero ${held(row)}, SE ${range(
     judged(row).map(({ ratio }) => ratio),
     (x) => significant(x, 3),

@@ -70,9 +70,10 @@ async function untilStopped(lab: RunningLab, say: (line: string) => void): Promi
     asked = true;
     lab.process.kill("SIGTERM");
   };
-  process.on("SIGINT", stop).on("SIGTERM", stop);
+  const signals = ["SIGINT", "SIGTERM", "SIGHUP"] as const;
+  for (const signal of signals) process.on(signal, stop);
   const code = await lab.ended;
-  process.off("SIGINT", stop).off("SIGTERM", stop);
+  for (const signal of signals) process.off(signal, stop);
   if (asked) {
     say("JupyterLab has stopped.");
     return 0;

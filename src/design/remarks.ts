@@ -26,7 +26,7 @@ export function designRemarks(
     });
   }
   const notes = new Set(columns.flatMap(({ note }) => (note === undefined ? [] : [note])));
-  for (const text of notes) remarks.push({ severity: "note", text });
+  if (notes.size > 0) remarks.push({ severity: "note", text: [...notes].join("; ") });
   return remarks;
 }
 

@@ -52,7 +52,7 @@ const unjudged = { se: Number.NaN, statistic: Number.NaN, low: Number.NaN, high:
 
 /** Refuses a level that is no probability between 0 and 1. */
 export function requireLevel(level: number): void {
-  if (level > 0 && level < 1) return;
+  if (typeof level === "number" && level > 0 && level < 1) return;
   const hint = level >= 50 && level < 100 ? ` Did you mean ${level / 100}?` : "";
-  throw new InputError(`the level of intervals must lie between 0 and 1, not ${level}.${hint}`);
+  throw new InputError(`the level of intervals must lie between 0 and 1, not ${String(level)}.${hint}`);
 }

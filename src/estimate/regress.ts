@@ -3,11 +3,14 @@ import type { Design } from "../design/index.js";
 import {
   columnOf,
   InputError,
+  type LeastSquares,
   type Matrix,
+  norm,
   orthonormalBasis,
   RankDeficient,
   solveLeastSquares,
 } from "../numeric/index.js";
+import { dependenceMessage } from "./dependence-message.js";
 import type { Regression } from "./regression.js";
 
 /** A regression by least squares, with what only the estimation itself knows. */
@@ -18,11 +21,11 @@ export interface LeastSquaresFit extends Regression {
 
 /**
  * Least squares of a design (T rows, k columns). Throws InputError naming the terms that depend on one another, with
- * the combination that reproduces each.
+ * the combination that reproduces each, and the series whose size leaves no room for its squares.
  */
 export function regress(design: Design): LeastSquaresFit {
   const { X, y, terms, interceptAt, periods, laggedOutcome, index } = design;
-  const solved = solve(X, y, terms);
+  const solved = solve(design);
   let Q: Matrix | undefined;
   let leverage: Float64Array | undefined;
   return {
@@ -51,35 +54,38 @@ export function regress(design: Design): LeastSquaresFit {
   };
 }
 
-function solve(X: Matrix, y: Float64Array, terms: readonly string[]) {
+function solve({ X, y, terms, outcome }: Design): LeastSquares {
   try {
-    return solveLeastSquares(X, y);
+    const solved = solveLeastSquares(X, y);
+    requireSquares(solved, X, y, terms, outcome);
+    return solved;
   } catch (error) {
     if (error instanceof RankDeficient) throw new InputError(dependenceMessage(error, X, terms));
     throw error;
   }
 }
 
-function dependenceMessage(error: RankDeficient, X: Matrix, terms: readonly string[]): string {
-  const target = error.dependent[0]!;
-  const parts = error.combination[0]!;
-  const name = JSON.stringify(terms[target]);
-  const wayOut = `Drop one of them.`;
-  const column = columnOf(X, target);
-  if (parts.length === 0) return `fit: ${name} is zero in every period used. Drop it.`;
-  if (column.every((value) => value === column[0])) {
-    return `fit: ${name} is constant (${column[0]}) over the periods used and cannot be told from the intercept. Drop it, or say intercept: false.`;
+// Sums of squares beyond 1e±290 overflow, or lose digits to underflow, without a word.
+function requireSquares(
+  { rss, gramInverse }: LeastSquares,
+  X: Matrix,
+  y: Float64Array,
+  terms: readonly string[],
+  outcome: string,
+): void {
+  const tiny = rss < 1e-290 && norm(y) > 0 && norm(y) < 1e-130;
+  if (tiny || !(rss < 1e290)) throw new InputError(sizeMessage(outcome, y));
+  for (let j = 0; j < terms.length; j++) {
+    const square = gramInverse.data[j * terms.length + j]!;
+    if (!(square > 1e-290 && square < 1e290)) throw new InputError(sizeMessage(terms[j]!, columnOf(X, j)));
   }
-  if (parts.length === 1 && terms[parts[0]!.column] === "intercept") {
-    return `fit: ${name} hardly varies against its size and cannot be told from the intercept. Measure it from another origin, or drop it.`;
-  }
-  const written = parts.map(({ column, weight }, i) => {
-    const size = Math.abs(weight);
-    const factor = Math.abs(size - 1) < 1e-9 ? "" : `${Number(size.toPrecision(6))} × `;
-    const sign = weight < 0 ? "\u2212 " : i === 0 ? "" : "+ ";
-    return `${sign}${factor}${JSON.stringify(terms[column])}`;
-  });
-  return `fit: the terms depend on one another: ${name} = ${written.join(" ")} in every period used. ${wayOut}`;
+}
+
+function sizeMessage(label: string, values: Float64Array): string {
+  let size = 0;
+  for (const value of values) size = Math.max(size, Math.abs(value));
+  const factor = `1e${-Math.floor(Math.log10(size))}`;
+  return `fit: "${label}" has values of a size (up to ${size.toPrecision(3)}) whose squares cannot be held. Measure it in another unit: times(${JSON.stringify(label)}, ${factor}).`;
 }
 
 function rowLengths(Q: Matrix): Float64Array {

@@ -7,6 +7,7 @@ import type { Showing } from "../showing.js";
 import { htmlTable } from "../table/html.js";
 import {
   type Cell,
+  type Column,
   figure,
   probability,
   sentence,
@@ -72,24 +73,28 @@ function summary(m: Covariances): TableModel {
   };
 }
 
+function estimatorColumns(m: Covariances): Column[] {
+  const group = `${levelText(m.level)} interval`;
+  return [
+    { key: "estimator", title: "Estimator", wrap: 10 },
+    { key: "se", title: "SE", align: "decimal" },
+    { key: "ratio", title: "× classical", align: "decimal" },
+    { key: "low", title: "from", group, align: "decimal" },
+    { key: "high", title: "to", group, align: "decimal" },
+    { key: "p", title: "p", align: "decimal" },
+    { key: "law", title: "Law", wrap: 6 },
+  ];
+}
+
 /** Every estimator's figures for one coefficient. */
 function estimatorsTable(m: Covariances, row: Row): TableModel {
-  const group = `${levelText(m.level)} interval`;
   // One scale for all, so that the figures can be compared down the column.
   const given = judged(row);
   const ends = given.flatMap(({ low, high }) => [low, high]);
   const scale = scaleFor([row.estimate, ...ends], Math.min(row.classicalSe, ...given.map(({ se }) => se)));
   return {
     title: `${name(row.term)}, estimate ${number(row.estimate)}`,
-    columns: [
-      { key: "estimator", title: "Estimator", wrap: 10 },
-      { key: "se", title: "SE", align: "decimal" },
-      { key: "ratio", title: "× classical", align: "decimal" },
-      { key: "low", title: "from", group, align: "decimal" },
-      { key: "high", title: "to", group, align: "decimal" },
-      { key: "p", title: "p", align: "decimal" },
-      { key: "law", title: "Law", wrap: 6 },
-    ],
+    columns: estimatorColumns(m),
     rows: row.intervals.map((interval): Cell[] => [
       sentence(m.estimators[interval.estimator]!.label),
       figure(interval.se, scale),
@@ -107,7 +112,7 @@ function everything(m: Covariances): TableModel {
   const parts = m.coefficients.map((row) => ({ row, table: estimatorsTable(m, row) }));
   return {
     title: `Coefficients of ${name(m.outcome)} under every estimator`,
-    columns: [{ key: "term", title: "Term" }, ...estimatorsTable(m, m.coefficients[0]!).columns],
+    columns: [{ key: "term", title: "Term" }, ...estimatorColumns(m)],
     rows: parts.flatMap(({ row, table }) => table.rows.map((cells) => [words(row.term), ...cells])),
   };
 }

@@ -101,6 +101,17 @@ test("the chart draws the first eight, or the one that is asked for", () => {
   assert.deepEqual([...drawn(chart(compared, "intervals", "x7").spec)], ["x7"]);
 });
 
+test("a comparison of no coefficient, and one whose estimators all refuse, are shown", async () => {
+  const none = covariances(m, estimators, { terms: [] });
+  assert.equal(tableOf(none, "intervals").rows.length, 0);
+  assert.deepEqual(faults((await shown(none))["text/html"] as string), []);
+  const refused = covariances(m, [neweyWest({ lags: 100_000 })]);
+  const bundle = await shown(refused);
+  assert.match(bundle["text/plain"] as string, /no interval/);
+  assert.deepEqual(faults(bundle["text/html"] as string), []);
+  assert.doesNotMatch(bundle["text/plain"] as string, /NaN|Infinity/);
+});
+
 test("a bandwidth path marks each rule's choice", async () => {
   const path = bandwidthPath(m, "x29");
   const table = tableOf(path);

@@ -66,10 +66,13 @@ export class NumberParts {
   #parts: Float64Array[] = [];
   #length = 0;
 
-  /** Adds the first `rows` values of a vector of doubles; null becomes NaN. */
+  /** Adds the first `rows` values of a vector of doubles, which must hold no null (the query turns them into NaN). */
   add(vector: DuckDBVector, rows: number): void {
     const values = new Float64Array(rows);
-    for (let i = 0; i < rows; i++) values[i] = (vector.getItem(i) as number | null) ?? Number.NaN;
+    // The vector's own array, where it shows one, saves a call for each of what may be millions of values.
+    const { items } = vector as unknown as { readonly items?: unknown };
+    if (items instanceof Float64Array && items.length >= rows) values.set(items.subarray(0, rows));
+    else for (let i = 0; i < rows; i++) values[i] = (vector.getItem(i) as number | null) ?? Number.NaN;
     this.#parts.push(values);
     this.#length += rows;
   }

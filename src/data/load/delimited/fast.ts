@@ -60,7 +60,7 @@ export async function readFast(
     if (kind === "time" && pattern) {
       const values = numbers[at++]!.join();
       const walls = pattern.offset ? numbers[at++]!.join() : undefined;
-      if (values.some((value) => Number.isNaN(value))) return undefined;
+      if (values.includes(Number.NaN)) return undefined;
       columns.push(times(name, pattern, values, walls));
     } else if (kind === "number") columns.push({ name, kind, values: numbers[at++]!.join() });
     else columns.push(textual({ name, kind: "text", values: texts[at++]! }, kind, style));

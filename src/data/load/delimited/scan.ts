@@ -1,6 +1,6 @@
 import { isUtf8 } from "node:buffer";
 import { createHash } from "node:crypto";
-import { createReadStream } from "node:fs";
+import { open } from "node:fs/promises";
 
 /** What the bytes of a text file show at one reading. */
 export interface Scan {
@@ -26,8 +26,7 @@ export async function scan(path: string): Promise<Scan> {
   let underscores = false;
   let firstLineOver = false;
   let zeroBytes = false;
-  for await (const chunk of createReadStream(path, { highWaterMark: 1 << 20 })) {
-    const bytes = chunk as Buffer;
+  await eachPiece(path, (bytes) => {
     hash.update(bytes);
     if (utf8) {
       const joined = unfinished.length > 0 ? Buffer.concat([unfinished, bytes]) : bytes;
@@ -53,9 +52,24 @@ export async function scan(path: string): Promise<Scan> {
       else blankWaiting = blankWaiting || across >= 0 || inside >= 0;
       tail = Buffer.from(bytes.subarray(-3));
     }
-  }
+  });
   if (utf8 && unfinished.length > 0) utf8 = isUtf8(unfinished);
   return { fingerprint: hash.digest("hex"), utf8, blankLines, underscores, zeroBytes };
+}
+
+/** Reads a file piece by piece into one buffer, which the next piece overwrites. */
+async function eachPiece(path: string, take: (bytes: Buffer) => void): Promise<void> {
+  const file = await open(path);
+  try {
+    const buffer = Buffer.allocUnsafe(1 << 20);
+    for (;;) {
+      const { bytesRead } = await file.read(buffer, 0, buffer.length, null);
+      if (bytesRead === 0) return;
+      take(buffer.subarray(0, bytesRead));
+    }
+  } finally {
+    await file.close();
+  }
 }
 
 /** Length of the longest start that ends after an ASCII byte, where no character can be cut in two. */

@@ -1,4 +1,15 @@
-// The door of this room. Loading it says how every kind of result is shown.
+/*
+ * The door of this room. Loading it says how every kind of result is shown.
+ *
+ * What JupyterLab 4.6 does to what it is sent (found in its public source, apputils' sanitizer.ts, and held by
+ * test/browser/show.test.ts):
+ * - In a bundle text/html comes before Vega-Lite, Vega-Lite before image/svg+xml; so cards are HTML with pictures inside, and a
+ *   chart has no HTML. Vega-Lite is drawn up to MIME version 5 only, by its own Vega-Lite 5.6, trusted or not.
+ * - An untrusted output loses style and script elements, inline SVG, identifiers, role and aria attributes, and styles that are not
+ *   on a list: var(), calc(), inherit, transform, font-variant-numeric. It keeps details, tables, class, title, inline styles
+ *   (position, grid and flex, borders, rgba()), and images with data in their address.
+ * - MathJax reads dollar signs in HTML unless a class says not to. Zebra rows and right-aligned cells are its style sheet's.
+ */
 
 import { bandwidthPathShowing } from "./presenters/bandwidth-path.js";
 import { showCharts } from "./presenters/chart.js";

@@ -20,7 +20,8 @@ export interface LagbookRecord {
 
 /** The record of a result. Numbers that JSON has no writing for (NaN, infinities) become null. */
 export function recordOf(result: Result, shown?: Record<string, unknown>): LagbookRecord {
-  const { seed, fingerprint } = result as { seed?: unknown; fingerprint?: unknown };
+  const { seed } = result as { seed?: unknown };
+  const fingerprint = fingerprintOf(result);
   return {
     lagbook: 1,
     kind: result.kind,
@@ -28,8 +29,15 @@ export function recordOf(result: Result, shown?: Record<string, unknown>): Lagbo
     ...(shown === undefined ? {} : { shown: plain(shown) as Record<string, unknown> }),
     versions: { node: process.versions.node, lagbook: lagbookVersion() },
     ...(typeof seed === "number" || typeof seed === "string" ? { seed } : {}),
-    ...(typeof fingerprint === "string" ? { fingerprint } : {}),
+    ...(fingerprint === undefined ? {} : { fingerprint }),
   };
+}
+
+/** The fingerprint of the data that a result came from, wherever it carries it. */
+export function fingerprintOf(result: unknown): string | undefined {
+  const { fingerprint, about } = result as { fingerprint?: unknown; about?: { fingerprint?: unknown } };
+  const found = fingerprint ?? about?.fingerprint;
+  return typeof found === "string" ? found : undefined;
 }
 
 // A record leaves the process as JSON: what is shown here is what is read back there. Typed arrays become arrays.

@@ -3,6 +3,7 @@ import { InputError } from "../numeric/index.js";
 import { bundle, type Card } from "./card/card.js";
 import { Chart } from "./chart/chart.js";
 import type { ChartSource } from "./chart/spec.js";
+import { fingerprintOf } from "./record.js";
 import type { TableModel } from "./table/model.js";
 import { Table } from "./table/table.js";
 
@@ -81,6 +82,5 @@ export function tableOf(result: Result, which?: string): Table {
   if (result instanceof Table && which === undefined) return result;
   const { tables } = showingOf("tableOf", result) as Showing<Result>;
   const [, make] = chosen("tableOf", result, tables, which);
-  const { fingerprint } = result as { fingerprint?: unknown };
-  return new Table(make(result), typeof fingerprint === "string" ? fingerprint : undefined);
+  return new Table(make(result), fingerprintOf(result));
 }

@@ -1,4 +1,5 @@
 import { Result } from "../../data/index.js";
+import { fingerprintOf } from "../record.js";
 import { drawSvg } from "./draw.js";
 import { type ChartSource, dressed, type VegaLite } from "./spec.js";
 
@@ -22,8 +23,8 @@ export class Chart extends Result {
     this.spec = dressed(source);
     this.of = of.kind;
     this.which = which;
-    const { fingerprint } = of as { fingerprint?: unknown };
-    if (typeof fingerprint === "string") this.fingerprint = fingerprint;
+    const fingerprint = fingerprintOf(of);
+    if (fingerprint !== undefined) this.fingerprint = fingerprint;
     Object.freeze(this);
   }
 

@@ -57,6 +57,8 @@ test("records survive JSON unchanged and say what made them", async () => {
     assert.deepEqual(JSON.parse(JSON.stringify(record)), record, kind);
     assert.equal(record["lagbook"], 1);
     assert.equal(record["kind"], kind);
+    if (!["integration", "cointegration"].includes(kind))
+      assert.match(String(record["fingerprint"]), /^[0-9a-f]{64}$/, kind);
     assert.deepEqual(record["versions"], { node: process.versions.node, lagbook: "0.1.0" });
   }
 });

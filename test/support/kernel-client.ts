@@ -135,7 +135,7 @@ export class KernelClient {
   }
 
   /** Waits until `find` finds something. */
-  async until<R>(find: () => R | undefined, milliseconds = 20_000): Promise<R> {
+  async until<R>(find: () => R | undefined, milliseconds = 60_000): Promise<R> {
     const limit = Date.now() + milliseconds;
     for (;;) {
       const found = find();

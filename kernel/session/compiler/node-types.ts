@@ -12,6 +12,7 @@ const onDemand: Readonly<Record<string, readonly string[]>> = {
   "async_hooks.d.ts": ["async_hooks"],
   "child_process.d.ts": ["child_process"],
   "cluster.d.ts": ["cluster"],
+  "constants.d.ts": ["constants"],
   "dgram.d.ts": ["dgram"],
   "diagnostics_channel.d.ts": ["diagnostics_channel"],
   "dns.d.ts": ["dns"],
@@ -23,7 +24,6 @@ const onDemand: Readonly<Record<string, readonly string[]>> = {
   "http2.d.ts": ["http2"],
   "https.d.ts": ["https"],
   "inspector.generated.d.ts": ["inspector", "inspector/promises"],
-  "net.d.ts": ["net"],
   "os.d.ts": ["os"],
   "path.d.ts": ["path", "path/posix", "path/win32"],
   "punycode.d.ts": ["punycode"],
@@ -36,10 +36,8 @@ const onDemand: Readonly<Record<string, readonly string[]>> = {
   "stream/promises.d.ts": ["stream/promises"],
   "string_decoder.d.ts": ["string_decoder"],
   "test.d.ts": ["node:test", "node:test/reporters"],
-  "timers/promises.d.ts": ["timers/promises"],
   "tls.d.ts": ["tls"],
   "trace_events.d.ts": ["trace_events"],
-  "tty.d.ts": ["tty"],
   "v8.d.ts": ["v8"],
   "vm.d.ts": ["vm"],
   "wasi.d.ts": ["wasi"],
@@ -59,29 +57,41 @@ export const nodeTypePaths: Readonly<Record<string, string[]>> = Object.fromEntr
 
 /** The compiler's `paths` for a session in a folder: none where that folder has types of Node of its own, which are read whole. */
 export function pathsFor(directory: string): Readonly<Record<string, string[]>> {
+  return hasOwn(directory) ? {} : nodeTypePaths;
+}
+
+/** The compiler's `typeRoots` for a session in a folder: ours, or its own if it has types of Node. */
+export function typeRootsFor(directory: string): { readonly typeRoots?: string[] } {
+  return hasOwn(directory) ? {} : { typeRoots: [dirname(folder)] };
+}
+
+function hasOwn(directory: string): boolean {
   try {
     const found = createRequire(join(directory, "cell.js")).resolve("@types/node/package.json");
-    return dirname(found) === folder ? nodeTypePaths : {};
+    return dirname(found) !== folder;
   } catch {
-    return nodeTypePaths;
+    return false;
   }
 }
 
 /**
- * The text of a file of types, without what would have everything read: the references in the index of Node's types, and the
- * table of `process.getBuiltinModule`, which then gives an object of no particular type for these.
+ * The text of a file of types, without what would have everything read: the references in the index of Node's types, the
+ * table of `process.getBuiltinModule`, which then gives an object of no particular type for these, and in the files that are
+ * always read the imports of such modules. A global's part that is of such a type (`process.stdin`'s, say) may be anything.
  */
 export function withoutOnDemand(path: string, text: string | undefined): string | undefined {
-  if (text === undefined || !path.startsWith(folder)) return text;
+  if (text === undefined || !(path.startsWith(folder) || path.includes("/undici-types/"))) return text;
   if (basename(path) === "index.d.ts") {
     return text.replace(/^\/\/\/ <reference path="(?:\.\.\/)?([^"]+)" \/>$/gm, (line, file) =>
       file in onDemand ? "" : line,
     );
   }
-  if (basename(path) === "process.d.ts") {
-    return text.replace(/^ *"([^"]+)": typeof import\("[^"]+"\);$/gm, (line, name) =>
-      name in nodeTypePaths ? "" : line,
-    );
-  }
-  return text;
+  if (path.slice(folder.length + 1) in onDemand) return text;
+  const unread = text.replace(/^( *import .* from )["']([^"']+)["'];?$/gm, (line, head, name) =>
+    name in nodeTypePaths ? `${head}"not-read:${name}";` : line,
+  );
+  if (basename(path) !== "process.d.ts") return unread;
+  return unread.replace(/^ *"([^"]+)": typeof import\("[^"]+"\);$/gm, (line, name) =>
+    name in nodeTypePaths ? "" : line,
+  );
 }

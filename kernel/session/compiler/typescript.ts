@@ -2,7 +2,7 @@ import { createRequire } from "node:module";
 import { dirname, join } from "node:path";
 import { fileURLToPath } from "node:url";
 import type * as TypeScript from "@tslab/typescript-for-tslab";
-import { pathsFor, withoutOnDemand } from "./node-types.js";
+import { pathsFor, typeRootsFor, withoutOnDemand } from "./node-types.js";
 
 const require = createRequire(import.meta.url);
 const path = require.resolve("@tslab/typescript-for-tslab");
@@ -54,6 +54,7 @@ export function adaptTypeScript(): void {
           "lagbook/notebook": [join(packageFolder, "dist/kernel/session/notebook.d.ts")],
         },
         types: ["node"],
+        ...typeRootsFor(process.cwd()),
       };
       return (ts.createWatchCompilerHost as (...args: unknown[]) => unknown)(files, adapted, ...rest);
     },

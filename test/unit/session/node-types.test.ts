@@ -27,6 +27,12 @@ test("a cell that imports such a module has its types, and globals have theirs w
     };
     assert.equal(await typed(`const b: Buffer = Buffer.from("a"); process.stdout.isTTY; setTimeout`), "ok");
     assert.match(String(await typed(`const n: number = process.cwd()`)), /string/);
+    assert.equal(await typed(`process.stdout.write(""); process.stdin.on; process.hrtime.bigint()`), "ok");
+    assert.equal(
+      await typed(`new URL("a:b").href; crypto.randomUUID(); structuredClone([1]); typeof fetch`),
+      "ok",
+    );
+    assert.equal(await typed(`import { promisify } from "util"; await promisify(setTimeout)(1)`), "ok");
     assert.equal(await typed(`import { gzipSync } from "zlib"; const z: Buffer = gzipSync("a")`), "ok");
     assert.match(
       String(await typed(`import * as h from "node:http2"; const h2: string = h.constants`)),

@@ -43,9 +43,10 @@ export async function ensureEnvironment(
     ...["--progress-bar", "off", "--requirement", file],
   ]);
   if (pip.code !== 0) {
+    const errors = pip.text.split("\n").filter((line) => line.startsWith("ERROR"));
     throw new SetUpError(
-      "pip could not install JupyterLab's packages (is there a network?)",
-      tail(pip.text, 6),
+      "JupyterLab's packages, which pip could not install (is there a network?)",
+      tail(errors.length > 0 ? errors.join("\n") : pip.text, 4),
     );
   }
   const still = await missingPackages(at.python, file);

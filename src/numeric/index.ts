@@ -3,7 +3,7 @@ export { cholesky, NotPositiveDefinite, solveCholesky } from "./cholesky.js";
 export { chiSquared } from "./distributions/chi-squared.js";
 export { fisher } from "./distributions/fisher.js";
 export { normal } from "./distributions/normal.js";
-export { logGamma } from "./distributions/special.js";
+export { logGamma } from "./distributions/stirling.js";
 export { studentT } from "./distributions/student-t.js";
 export { durbinWatsonLower, durbinWatsonTails, type RatioTails } from "./durbin-watson.js";
 export { singularValues, symmetricEigen } from "./eigen.js";

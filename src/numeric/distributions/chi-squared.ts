@@ -1,17 +1,19 @@
-import { incompleteGamma } from "./special.js";
-import { tailQuantile } from "./tail-quantile.js";
+import { incompleteGamma } from "./incomplete-gamma.js";
+import { lowerQuantile, tailQuantile } from "./tail-quantile.js";
 
-const upper = (x: number, df: number) => (x <= 0 ? 1 : incompleteGamma(x / 2, df / 2, true, true));
-const upperQuantile = (p: number, df: number) => tailQuantile((x) => upper(x, df), p);
+const cdf = (x: number, df: number) => incompleteGamma(df / 2, x / 2).lower;
+const upper = (x: number, df: number) => incompleteGamma(df / 2, x / 2).upper;
 
-/** The χ² distribution with `df` > 0 degrees of freedom. */
+/** The χ² distribution with `df` > 0 degrees of freedom, not necessarily whole. NaN for other `df`. */
 export const chiSquared = {
   /** P(χ² ≤ x). */
-  cdf: (x: number, df: number) => (x <= 0 ? 0 : incompleteGamma(x / 2, df / 2, true, false)),
+  cdf,
   /** P(χ² > x). */
   upper,
   /** The x with P(χ² ≤ x) = p. */
-  quantile: (p: number, df: number) => upperQuantile(1 - p, df),
+  quantile: (p: number, df: number) =>
+    p < 0.5 ? lowerQuantile((x) => cdf(x, df), p) : tailQuantile((x) => upper(x, df), 1 - p),
   /** The x with P(χ² > x) = p. */
-  upperQuantile,
+  upperQuantile: (p: number, df: number) =>
+    p > 0.5 ? lowerQuantile((x) => cdf(x, df), 1 - p) : tailQuantile((x) => upper(x, df), p),
 };

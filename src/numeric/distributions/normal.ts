@@ -1,6 +1,4 @@
-import { erfc } from "./special.js";
-
-const upper = (x: number) => erfc(x / Math.SQRT2) / 2;
+import { normalUpper } from "./normal-tail.js";
 
 /** Numerators and denominators of Wichura's (1988) algorithm AS 241, highest power last. */
 const central = [
@@ -59,9 +57,9 @@ function quantile(p: number): number {
 /** The standard normal distribution. Tails keep their relative accuracy as far as doubles reach. */
 export const normal = {
   /** P(Z ≤ x). */
-  cdf: (x: number) => upper(-x),
+  cdf: (x: number) => normalUpper(-x),
   /** P(Z > x). */
-  upper,
+  upper: normalUpper,
   /** The x with P(Z ≤ x) = p. */
   quantile,
   /** The x with P(Z > x) = p. */

@@ -1,14 +1,14 @@
-import { incompleteBeta } from "./special.js";
+import { incompleteBeta } from "./incomplete-beta.js";
+import { normal } from "./normal.js";
 import { tailQuantile } from "./tail-quantile.js";
 
 function upper(x: number, df: number): number {
-  if (Number.isNaN(x)) return Number.NaN;
-  if (x < 0) return 1 - upper(-x, df);
-  if (x === Number.POSITIVE_INFINITY) return 0;
-  // P(T > x) = ½ I_{ν/(ν+x²)}(ν/2, ½); the smaller argument keeps its digits.
-  const square = x * x;
-  if (square > df) return incompleteBeta(df / (df + square), df / 2, 0.5, true, false) / 2;
-  return incompleteBeta(square / (df + square), 0.5, df / 2, true, true) / 2;
+  if (Number.isNaN(x)) return x;
+  if (df === Number.POSITIVE_INFINITY) return normal.upper(x);
+  const ratio = (x / df) * x;
+  // P(|T| > x) = I_{ν/(ν+x²)}(ν/2, ½). The variable and what it lacks to one each have all their digits.
+  const beyond = incompleteBeta(0.5, df / 2, 1 / (1 + 1 / ratio), 1 / (1 + ratio));
+  return x < 0 ? 0.5 + beyond.lower / 2 : beyond.upper / 2;
 }
 
 function upperQuantile(p: number, df: number): number {
@@ -16,7 +16,7 @@ function upperQuantile(p: number, df: number): number {
   return tailQuantile((x) => upper(x, df), p);
 }
 
-/** Student's t distribution with `df` > 0 degrees of freedom, not necessarily whole. */
+/** Student's t distribution with `df` > 0 degrees of freedom, not necessarily whole; infinite `df` gives the normal law. */
 export const studentT = {
   /** P(T ≤ x). */
   cdf: (x: number, df: number) => upper(-x, df),

@@ -6,6 +6,7 @@ export function tailQuantile(tail: (x: number) => number, p: number): number {
   if (Number.isNaN(p) || p < 0 || p > 1) return Number.NaN;
   if (p === 0) return Number.POSITIVE_INFINITY;
   if (p >= tail(0)) return 0;
+  if (tail(1e300) > p) return Number.POSITIVE_INFINITY;
   let low = 1e-300;
   let high = 1;
   while (tail(high) > p && high < 1e300) {
@@ -41,4 +42,9 @@ export function tailQuantile(tail: (x: number) => number, p: number): number {
     }
   }
   return low + (high - low) / 2;
+}
+
+/** The x ≥ 0 at which an increasing probability equals p, with the same accuracy as `tailQuantile`. */
+export function lowerQuantile(cdf: (x: number) => number, p: number): number {
+  return 1 / tailQuantile((z) => cdf(1 / z), p);
 }

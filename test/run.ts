@@ -16,20 +16,15 @@ import { readSummary } from "./machine/summary.js";
 import { root } from "./root.js";
 
 const say = (line: string) => console.log(line);
-const rooms = ["unit", "property", "reference", "conformance", "browser"];
 
 function testFiles(wanted: readonly string[]): string[] {
-  const order = (path: string) => {
-    const at = rooms.findIndex((room) => path.startsWith(room));
-    return at === -1 ? rooms.length : at;
-  };
   return readdirSync(join(root, "test"), { recursive: true, encoding: "utf8" })
     .map((path) => path.replaceAll("\\", "/"))
     .filter((path) => path.endsWith(".test.ts"))
     .filter(
       (path) => wanted.length === 0 || wanted.some((start) => path.startsWith(start.replace(/^test\//, ""))),
     )
-    .sort((a, b) => order(a) - order(b) || (a < b ? -1 : 1))
+    .sort()
     .map((path) => join(root, "dist", "test", path.replace(/\.ts$/, ".js")));
 }
 

@@ -1,19 +1,25 @@
 import type { ReferenceLaw } from "../../estimate/index.js";
 import type { Scores } from "../scores.js";
+import { dotAt } from "../shape/vectors.js";
 import { criticalValue } from "./craig.js";
 import { dependentSpectrum } from "./dependent.js";
 import { type DependentSpectrum, missProbability } from "./dependent-spectrum.js";
+import type { ContrastDesign } from "./design.js";
 import { correlationOperator, type ErrorProcess } from "./error-process.js";
 import { designFor, type FixedB } from "./fixed-b.js";
 import { lawOf } from "./form-law.js";
 
 /**
- * Dimension of the space that the law is computed in. Short samples, errors that alternate in sign and bandwidths below
- * 1.3 √T spread the eigenvalues out and need more.
+ * Dimension of the space that the law is computed in. About 2/b eigenvalues of B matter (measured); three times as
+ * many where the errors run against the contrast, one alternating while the other lasts. On short samples more cost
+ * nothing.
  */
-function steps(span: number, bandwidth: number, { ar }: ErrorProcess): number {
-  const base = span <= 100 || ar.some((phi) => phi < -0.2) ? 64 : 28;
-  return Math.round(Math.min(200, base * Math.max(1, (1.3 * Math.sqrt(span)) / bandwidth)));
+function steps(design: ContrastDesign, bandwidth: number, { ar, ma }: ErrorProcess): number {
+  const { weights } = design;
+  const span = weights.length;
+  if (span <= 100) return 64;
+  const lasting = dotAt(weights, 1, weights, 0, span - 1) * (ar[0] ?? ma[0] ?? 0);
+  return Math.min(160, Math.ceil(((lasting < -0.03 ? 6 : 2.8) * span) / bandwidth));
 }
 
 /**
@@ -30,12 +36,13 @@ export function dependentLaw(
   let spectrum: DependentSpectrum | undefined;
   const root = Math.sqrt(choice.factor);
   const miss = (c: number): number => {
+    const design = designFor(scores, contrast);
     spectrum ??= dependentSpectrum(
-      designFor(scores, contrast),
+      design,
       choice.kernel,
       choice.bandwidth,
       correlationOperator(process, scores.span),
-      steps(scores.span, choice.bandwidth, process),
+      steps(design, choice.bandwidth, process),
     );
     return c === 0 ? 1 : missProbability(c * root, spectrum);
   };

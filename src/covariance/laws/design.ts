@@ -4,7 +4,12 @@ import { influenceWeights, type Scores } from "../scores.js";
 import { addTimesAt, dot, dotAt, scale } from "../shape/vectors.js";
 import { higherMoments } from "./band-moments.js";
 import type { Form } from "./krylov.js";
+import { localRatios } from "./local-moments.js";
+import type { PowerSums } from "./spectrum.js";
 import { type LagOperator, lagOperator } from "./toeplitz.js";
+
+/** Up to here exact moments cost next to nothing. */
+const SHORT = 128;
 
 /** A contrast on a design, as the law of its t ratio sees it. */
 export interface ContrastDesign {
@@ -77,12 +82,21 @@ export function hacForm(design: ContrastDesign, kernel: Kernel, bandwidth: numbe
     square -= 2 * dotAt(images, j * n, images, j * n, n);
     for (let i = 0; i < k; i++) square += dotAt(basis.data, i * n, images, j * n, n) ** 2;
   }
-  const sums = {
-    first: trace,
-    second: Math.max(square, trace ** 2 / rank),
-    ...higherMoments(design, kernel, bandwidth, images),
+  const sums = { first: trace, second: Math.max(square, trace ** 2 / rank) };
+  const local = (): PowerSums => {
+    const { third, fourth } = localRatios(design.squares(), kernel, bandwidth);
+    const { first, second } = sums;
+    return { ...sums, third: (third * second ** 2) / first, fourth: (fourth * second ** 3) / first ** 2 };
   };
-  return { size: n, rank, apply, project: places ? keepOnly(places, project) : project, sums };
+  return {
+    size: n,
+    rank,
+    apply,
+    project: places ? keepOnly(places, project) : project,
+    sums,
+    ...(n > SHORT && kernel.name !== "daniell" ? { local } : {}),
+    exact: () => ({ ...sums, ...higherMoments(design, kernel, bandwidth, images) }),
+  };
 }
 
 /** DKDx for k columns x that lie side by side. */

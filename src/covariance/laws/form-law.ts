@@ -8,8 +8,9 @@ const ERROR = 2e-4;
 
 /**
  * The law of Z/√(factor · Q), Z standard normal and Q = Σ λχ²_1 with the eigenvalues of a form. As much of the spectrum is
- * resolved as the point asked about needs, and no more: tails near 5 % are right to 1e-5, near
- * 0.1 % to 1 part in 1,000, near 1e-6 to 1 in 100, checked against all eigenvalues.
+ * resolved as the point asked about needs, and no more. Measured against all eigenvalues on 250 designs, kernels and bandwidths (T from
+ * 30 to 400; iid, stationary, random-walk, seasonal and trend regressors): p near 5 % is right to 1e-4, critical values to 1e-3,
+ * p near 0.1 % to 1.5 %, and the order of magnitude of what is smaller.
  */
 export function formLaw(name: string, make: () => Form, factor: number, error = ERROR): ReferenceLaw {
   let prepared: { form: Form; resolve: Resolver } | undefined;
@@ -41,7 +42,7 @@ export function formLaw(name: string, make: () => Form, factor: number, error = 
 /** The relative error that a reader of this p can do with, where `error` will do at the usual levels. */
 function allowed(p: number, error: number): number {
   if (p > 0.01) return error;
-  return error * (p > 1e-4 ? 5 : p > 1e-7 ? 50 : 500);
+  return error * (p > 1e-3 ? 5 : p > 1e-5 ? 25 : p > 1e-8 ? 250 : 2500);
 }
 
 /** About where the critical value is, from the first two moments as degrees of freedom. */

@@ -13,7 +13,12 @@ export interface Form {
   readonly apply: (x: Float64Array, from: number, out: Float64Array) => void;
   /** Takes out of a vector, in place, what A does not act on. */
   readonly project: (x: Float64Array) => void;
+  /** Σλ and Σλ². */
   readonly sums: PowerSums;
+  /** What Σλ³ and Σλ⁴ are about, cheaply; absent where that is no guide. */
+  readonly local?: () => PowerSums;
+  /** All four, or the two where the others would cost too much. */
+  readonly exact: () => PowerSums;
 }
 
 /** Resolves a form's spectrum as far as a tail beyond c needs it; asked again, it goes on from where it stopped. */
@@ -24,21 +29,48 @@ const least = (size: number): number => (size <= 100 ? 12 : 3);
 const MOST = 200;
 
 /**
- * The spectrum of a form by the Lanczos process with full reorthogonalisation, from a fixed start, until what it has
- * not reached cannot move the tail beyond c by a share of more than `error` (see `resolved`).
+ * The spectrum of a form as far as asked: all of it in two bundles where a short bandwidth bears that, else by the Lanczos
+ * process with full reorthogonalisation, from a fixed start, until what it has not reached cannot move the tail
+ * beyond c by a share of more than `error` (see `resolved`).
  */
 export function resolver(form: Form): Resolver {
+  let process: Resolver | undefined;
+  let bundled: Spectrum | undefined;
+  return (c, error) => {
+    if (!process) {
+      const sums = form.local?.();
+      if (sums && bearsBundling(sums, c, error)) {
+        bundled ??= { leading: new Float64Array(), rest: bundles(sums) };
+        return bundled;
+      }
+      process = lanczos(form);
+    }
+    return process(c, error);
+  };
+}
+
+/**
+ * Whether the whole spectrum may be bundled by moments that are only about right. What the third moment beyond the least possible one does
+ * to the tail is of the relative order of c⁶ (Σλ³ − (Σλ²)²/Σλ)/12; a local third moment is off by a tenth of that (both measured).
+ */
+function bearsBundling({ first, second, third = 0 }: PowerSums, c: number, error: number): boolean {
+  const effect = (c ** 6 * (third - second ** 2 / first)) / 12;
+  return effect < 14 * error;
+}
+
+function lanczos(form: Form): Resolver {
   const { size } = form;
   const basis = new Basis(size);
   const diagonal: number[] = [];
   const side: number[] = [];
-  const left = { ...form.sums };
+  const all = form.exact();
+  const left = { ...all };
   const next = new Float64Array(size);
   let ready = start(form, basis, 0, next);
   let spectrum: Spectrum | undefined;
   return (c, error) => {
     let grown = false;
-    while (ready && basis.count < MOST && !(basis.count >= least(size) && resolved(left, form, c, error))) {
+    while (ready && basis.count < MOST && !(basis.count >= least(size) && resolved(left, all, c, error))) {
       grown = true;
       const at = basis.add(next);
       form.apply(basis.data, at, next);
@@ -53,13 +85,13 @@ export function resolver(form: Form): Resolver {
         basis.reduce(next);
         beta = Math.sqrt(dot(next, next));
       }
-      const coupled = beta > 1e-13 * form.sums.first;
+      const coupled = beta > 1e-13 * all.first;
       side.push(coupled ? beta : 0);
       if (coupled) scale(next, 1 / beta);
       // An invariant subspace: the other copies of repeated eigenvalues are in its complement.
       else ready = start(form, basis, basis.count, next);
     }
-    if (grown || !spectrum) spectrum = assemble(form, diagonal, side);
+    if (grown || !spectrum) spectrum = assemble(form.rank, all, diagonal, side);
     return spectrum;
   };
 }
@@ -69,8 +101,8 @@ export function resolver(form: Form): Resolver {
  * of the order of a sharp power of c²λ for the largest λ left; with two, of c⁶ times the third moment that is guessed.
  * Both constants are measured.
  */
-function resolved(left: PowerSums, form: Form, c: number, error: number): boolean {
-  if (!(left.first > 1e-12 * form.sums.first) || left.second <= 0) return true;
+function resolved(left: PowerSums, all: PowerSums, c: number, error: number): boolean {
+  if (!(left.first > 1e-12 * all.first) || left.second <= 0) return true;
   if (left.third !== undefined) {
     const largest = Math.max(...bundles(left).map(({ value }) => value));
     return c * c * largest < 3.2 * error ** (1 / 4);
@@ -95,10 +127,10 @@ function subtract(left: { -readonly [P in keyof PowerSums]: PowerSums[P] }, d: n
   }
 }
 
-function assemble(form: Form, diagonal: number[], side: number[]): Spectrum {
+function assemble(rank: number, all: PowerSums, diagonal: number[], side: number[]): Spectrum {
   const leading = Float64Array.from(diagonal);
   tridiagonalEigenvalues(leading, Float64Array.from(side));
-  const left = { ...form.sums };
+  const left = { ...all };
   for (let i = 0; i < leading.length; i++) {
     const value = Math.max(0, leading[i]!);
     leading[i] = value;
@@ -107,7 +139,7 @@ function assemble(form: Form, diagonal: number[], side: number[]): Spectrum {
     if (left.third !== undefined) left.third -= value ** 3;
     if (left.fourth !== undefined) left.fourth -= value ** 4;
   }
-  const exhausted = leading.length >= form.rank || left.first <= 1e-12 * form.sums.first || left.second <= 0;
+  const exhausted = leading.length >= rank || left.first <= 1e-12 * all.first || left.second <= 0;
   return { leading, rest: exhausted ? [] : bundles(left) };
 }
 

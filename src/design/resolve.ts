@@ -1,11 +1,11 @@
 import { suggestion, type TimeTable } from "../data/index.js";
 import { InputError } from "../numeric/index.js";
 import type { Labelled } from "./label.js";
-import { isTerm, makeTerm, type Term, type TermColumn, type TermLike } from "./term.js";
+import { isTerm, rowTerm, type Term, type TermColumn, type TermLike } from "./term.js";
 
 /** The term for a column's exact name: the name is never parsed. */
 export function columnTerm(name: string): Term {
-  return makeTerm(name, (table) => {
+  return rowTerm(name, (table) => {
     const values = table.numbers(name);
     const { filled } = table.column(name);
     return [{ label: name, values, filled, uses: [{ column: name, newest: 0, oldest: 0 }] }];
@@ -33,9 +33,9 @@ function wayOut(value: unknown): string {
   return "A term is a column's name, or made by lag, lags, diff, log, trend, seasonal, step and the like.";
 }
 
-/** The columns of whatever stands for a term. */
-export function columnsOf(term: TermLike, table: TimeTable): TermColumn[] {
-  return flatten(term).flatMap((part) => [...part.columns(table)]);
+/** The columns of whatever stands for a term, `back` periods before each row of the table. */
+export function columnsOf(term: TermLike, table: TimeTable, back = 0): TermColumn[] {
+  return flatten(term).flatMap((part) => [...part.columns(table, back)]);
 }
 
 /** The label of whatever stands for a term; of a list, all of them. */

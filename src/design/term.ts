@@ -1,5 +1,6 @@
 import type { TimeIndex, TimeTable } from "../data/index.js";
 import type { Labelled } from "./label.js";
+import { moved } from "./moved.js";
 
 /** How a term draws on a column of the table: its values at lags `newest` to `oldest` (negative: leads). */
 export interface Use {
@@ -25,28 +26,46 @@ export interface TermColumn extends Labelled {
   readonly note?: string;
 }
 
-/** An explanation: makes one or more columns from a table. */
+/** An explanation: a function of time that makes one or more columns from a table. */
 export interface Term extends Labelled {
   readonly kind: "term";
-  columns(table: TimeTable): readonly TermColumn[];
-  /** For a term made of time alone: its columns at any periods, so that a lag of it loses none. */
-  at?(index: TimeIndex, ordinals: Float64Array): readonly TermColumn[];
+  /**
+   * Its columns: for each row of the table, what the term was `back` periods before (default 0; negative: after). A lag
+   * asks what is inside it for an earlier time, so that no nesting loses a period that another would have.
+   */
+  columns(table: TimeTable, back?: number): readonly TermColumn[];
 }
 
 /** What stands for a term: a column's exact name, a term, or a list of them. */
 export type TermLike = string | Term | readonly TermLike[];
 
 /** A term from its label and what it makes of a table. */
-export function makeTerm(named: string | Labelled, columns: Term["columns"]): Term {
+export function makeTerm(
+  named: string | Labelled,
+  columns: (table: TimeTable, back: number) => readonly TermColumn[],
+): Term {
   const { label, form } = typeof named === "string" ? { label: named, form: undefined } : named;
-  return Object.freeze({ kind: "term" as const, label, form, columns });
+  return Object.freeze({
+    kind: "term" as const,
+    label,
+    form,
+    columns: (table: TimeTable, back = 0) => columns(table, back),
+  });
 }
 
-/** A term made of time alone. */
-export function calendarTerm(label: string, at: NonNullable<Term["at"]>): Term {
-  return Object.freeze({
-    ...makeTerm(label, ({ index }) => at(index, index.ordinals)),
-    at,
+/** A term made of what stands in the table's own rows. */
+export function rowTerm(label: string, columns: (table: TimeTable) => readonly TermColumn[]): Term {
+  return makeTerm(label, (table, back) => columns(table).map((column) => moved(column, back, table)));
+}
+
+/** A term made of time alone: it is known at every period, also beyond the table. */
+export function calendarTerm(
+  label: string,
+  at: (index: TimeIndex, ordinals: Float64Array) => readonly TermColumn[],
+): Term {
+  return makeTerm(label, ({ index }, back) => {
+    const ordinals = back === 0 ? index.ordinals : index.ordinals.map((ordinal) => ordinal - back);
+    return at(index, ordinals);
   });
 }
 

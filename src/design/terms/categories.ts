@@ -1,7 +1,7 @@
 import { type Column, suggestion, type TimeTable } from "../../data/index.js";
 import { InputError } from "../../numeric/index.js";
 import { requireOptions } from "../resolve.js";
-import { makeTerm, type Term, type TermColumn } from "../term.js";
+import { rowTerm, type Term, type TermColumn } from "../term.js";
 
 /** Options of `categories`. */
 export interface CategoryOptions {
@@ -16,7 +16,7 @@ export interface CategoryOptions {
 export function categories(name: string, options: CategoryOptions = {}): Term {
   if (typeof name !== "string") throw new InputError("categories: give the name of a column.");
   requireOptions("categories", options, ["base"]);
-  return makeTerm(`groups of ${name}`, (table) => {
+  return rowTerm(`groups of ${name}`, (table) => {
     const column = table.column(name);
     const present = Array.from({ length: table.T }, (_, row) => groupOf(column, row));
     const groups = groupsOf(name, present, table);

@@ -1,4 +1,4 @@
-import type { TermColumn } from "../term.js";
+import type { TermColumn, Use } from "../term.js";
 
 type Made = Pick<TermColumn, "values" | "edge" | "filled" | "uses">;
 
@@ -10,11 +10,25 @@ export function combined(a: TermColumn, b: TermColumn, operation: (a: number, b:
     values,
     edge: either(a.edge, b.edge),
     filled: either(a.filled, b.filled),
-    uses: [...a.uses, ...b.uses],
+    uses: mergedUses([...a.uses, ...b.uses]),
   };
 }
 
 function either(a: Uint8Array | undefined, b: Uint8Array | undefined): Uint8Array | undefined {
   if (!a || !b) return a ?? b;
   return a.map((flag, row) => flag | b[row]!);
+}
+
+/** One entry for each column, from its newest to its oldest value. */
+export function mergedUses(uses: readonly Use[]): Use[] {
+  const merged = new Map<string, Use>();
+  for (const use of uses) {
+    const known = merged.get(use.column);
+    merged.set(use.column, {
+      column: use.column,
+      newest: Math.min(use.newest, known?.newest ?? use.newest),
+      oldest: Math.max(use.oldest, known?.oldest ?? use.oldest),
+    });
+  }
+  return [...merged.values()];
 }

@@ -5,7 +5,6 @@ import { columnsOf, labelOf, requireOptions } from "../resolve.js";
 import { makeTerm, type Term, type TermColumn, type TermLike } from "../term.js";
 import { combined } from "./combine.js";
 import { log } from "./log.js";
-import { lag } from "./shift.js";
 
 /** Options of `diff` and `growth`. */
 export interface DifferenceOptions {
@@ -38,30 +37,25 @@ function difference(term: TermLike, options: DifferenceOptions, asked: string): 
       `${asked}: over must be a number of steps from 1 up, or "season", not ${JSON.stringify(over)}.`,
     );
   }
-  const sign = (steps: string) => `Δ${steps}${order === 1 ? "" : superscript(order)}`;
-  const known = over === "season" ? "ₛ" : over === 1 ? "" : subscript(over);
-  return makeTerm(operatorLabel(sign(known), labelOf(term)), (table) => {
+  return makeTerm(operatorLabel(signOf(order, over), labelOf(term)), (table, back) => {
     const steps = over === "season" ? seasonLength(table.index.step) : over;
     if (steps === undefined) {
       throw new InputError(
         `${asked}: steps of one ${stepName(table.index.step)} have no season; say over: the number of steps.`,
       );
     }
-    let rest: TermLike = term;
-    for (let i = 0; i < order; i++) rest = once(rest, steps);
-    const labels = columnsOf(term, table);
-    return columnsOf(rest, table).map((column, i) => ({
-      ...column,
-      ...operatorLabel(sign(steps === 1 ? "" : subscript(steps)), labels[i]!),
-    }));
+    const sign = signOf(order, steps);
+    let stage = Array.from({ length: order + 1 }, (_, i) => columnsOf(term, table, back + i * steps));
+    for (let i = 0; i < order; i++) stage = stage.slice(1).map((then, j) => changes(stage[j]!, then));
+    return stage[0]!.map((column) => ({ ...column, ...operatorLabel(sign, column) }));
   });
 }
 
-function once(term: TermLike, steps: number): Term {
-  return makeTerm("difference", (table) => {
-    const before = columnsOf(lag(term, steps), table);
-    return columnsOf(term, table).map(
-      (column, i): TermColumn => ({ ...column, ...combined(column, before[i]!, (now, then) => now - then) }),
-    );
-  });
+function changes(now: readonly TermColumn[], then: readonly TermColumn[]): TermColumn[] {
+  return now.map((column, j) => ({ ...column, ...combined(column, then[j]!, (a, b) => a - b) }));
+}
+
+function signOf(order: number, steps: number | "season"): string {
+  const below = steps === "season" ? "ₛ" : steps === 1 ? "" : subscript(steps);
+  return `Δ${below}${order === 1 ? "" : superscript(order)}`;
 }

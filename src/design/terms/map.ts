@@ -11,12 +11,14 @@ export function mapTerm(
   transform: (value: number) => number,
   problem?: (value: number) => string | undefined,
 ): Term {
-  return makeTerm(label(labelOf(term)), (table) =>
-    columnsOf(term, table).map((column): TermColumn => {
-      if (problem) refuse(table, column, label(column).label, problem);
+  return makeTerm(label(labelOf(term)), (table, back) => {
+    // What is wrong is looked for where it stands, not where a lag of it would.
+    if (problem)
+      for (const column of columnsOf(term, table)) refuse(table, column, label(column).label, problem);
+    return columnsOf(term, table, back).map((column): TermColumn => {
       return { ...column, ...label(column), values: column.values.map(transform) };
-    }),
-  );
+    });
+  });
 }
 
 function refuse(

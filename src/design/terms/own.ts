@@ -1,6 +1,6 @@
 import { type Row, rowsOf } from "../../data/index.js";
 import { InputError } from "../../numeric/index.js";
-import { makeTerm, type Term } from "../term.js";
+import { rowTerm, type Term } from "../term.js";
 
 /**
  * A term of your own from each row: `own("real fare", r => r.fare / r.prices)`. The row has every column's value and
@@ -12,7 +12,7 @@ export function own(label: string, value: (row: Row, position: number) => number
       'own: give a name and a function of a row, such as own("real fare", r => r.fare / r.prices).',
     );
   }
-  return makeTerm(label, (table) => {
+  return rowTerm(label, (table) => {
     const read = new Set<string>();
     const rows = rowsOf(table);
     const values = new Float64Array(table.T);

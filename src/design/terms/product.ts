@@ -9,9 +9,9 @@ export function product(a: TermLike, b: TermLike, ...more: readonly TermLike[]):
   if (b === undefined) throw new InputError("product: give two terms or more.");
   const [next, ...rest] = more;
   if (next !== undefined) return product(product(a, b), next, ...rest);
-  return makeTerm(productLabel(labelOf(a), labelOf(b)), (table) => {
-    const right = columnsOf(b, table);
-    return columnsOf(a, table).flatMap((left) =>
+  return makeTerm(productLabel(labelOf(a), labelOf(b)), (table, back) => {
+    const right = columnsOf(b, table, back);
+    return columnsOf(a, table, back).flatMap((left) =>
       right.map((other): TermColumn => {
         const notes = [...new Set([left.note, other.note])].filter((note) => note !== undefined);
         return {

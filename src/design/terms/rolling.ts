@@ -1,9 +1,9 @@
-import { type Aggregate, requireRegular, type TimeTable } from "../../data/index.js";
+import { type Aggregate, requireRegular } from "../../data/index.js";
 import { InputError } from "../../numeric/index.js";
 import { operatorLabel } from "../label.js";
-import { columnsOf, labelOf } from "../resolve.js";
+import { labelOf } from "../resolve.js";
 import { makeTerm, type Term, type TermColumn, type TermLike } from "../term.js";
-import { rowsByPeriod } from "./rows-by-period.js";
+import { type Past, pastOf } from "./past.js";
 
 /**
  * An aggregate (`mean`, `sum`, your own function of a Float64Array) of the present and the `length` − 1 periods before:
@@ -18,36 +18,28 @@ export function rolling(term: TermLike, aggregate: Aggregate, length: number): T
     throw new InputError(`rolling: the window must be a whole number of periods from 1 up, not ${length}.`);
   }
   const operator = `${aggregate.name || "own function"} of ${length}`;
-  return makeTerm(operatorLabel(operator, labelOf(term)), (table) => {
+  return makeTerm(operatorLabel(operator, labelOf(term)), (table, back) => {
     requireRegular(table.index, "rolling");
-    return columnsOf(term, table).map(
-      (column): TermColumn => ({
-        ...column,
-        ...operatorLabel(operator, column),
-        ...windows(column, aggregate, length, table),
+    return pastOf(term, table, back, length).map(
+      (past): TermColumn => ({
+        ...past.column,
+        ...operatorLabel(operator, past.column),
+        ...aggregated(past, aggregate),
       }),
     );
   });
 }
 
-function windows(column: TermColumn, aggregate: Aggregate, length: number, table: TimeTable) {
-  const { T } = table;
-  const rowOf = rowsByPeriod(table.index.ordinals);
+function aggregated(past: Past, aggregate: Aggregate) {
+  const T = past.column.values.length;
   const values = new Float64Array(T).fill(Number.NaN);
   const edge = new Uint8Array(T);
-  const filled = column.filled && new Uint8Array(T);
+  const filled = past.column.filled && new Uint8Array(T);
   for (let row = 0; row < T; row++) {
-    const window = new Float64Array(length);
-    let whole = true;
-    for (let i = 0; i < length; i++) {
-      const source = rowOf(row, length - 1 - i);
-      window[i] = source < 0 ? Number.NaN : column.values[source]!;
-      if (Number.isNaN(window[i]!)) whole = false;
-      if (source === -1 || column.edge?.[source]) edge[row] = 1;
-      if (filled && column.filled![source]) filled[row] = 1;
-    }
-    if (whole) values[row] = aggregate(window);
+    const window = past.values(row);
+    if (!window.some(Number.isNaN)) values[row] = aggregate(window);
+    else if (past.any("edge", row)) edge[row] = 1;
+    if (filled && past.any("filled", row)) filled[row] = 1;
   }
-  const uses = column.uses.map((use) => ({ ...use, oldest: use.oldest + length - 1 }));
-  return { values, edge, filled, uses };
+  return { values, edge, filled, uses: past.uses };
 }

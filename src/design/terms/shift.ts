@@ -1,56 +1,14 @@
-import { requireRegular, type TimeTable } from "../../data/index.js";
+import { requireRegular } from "../../data/index.js";
 import { InputError } from "../../numeric/index.js";
 import { movedLabel } from "../label.js";
-import { flatten, labelOf } from "../resolve.js";
-import { makeTerm, type Term, type TermColumn, type TermLike } from "../term.js";
-import { rowsByPeriod } from "./rows-by-period.js";
+import { columnsOf, labelOf } from "../resolve.js";
+import { makeTerm, type Term, type TermLike } from "../term.js";
 
 function shift(term: TermLike, by: number, asked: string): Term {
-  return makeTerm(movedLabel(labelOf(term), by), (table) => {
+  return makeTerm(movedLabel(labelOf(term), by), (table, back) => {
     requireRegular(table.index, asked);
-    return flatten(term).flatMap((part) => {
-      const named = (column: TermColumn) => ({ ...column, ...movedLabel(column, by) });
-      if (part.at) {
-        const there = table.index.ordinals.map((ordinal) => ordinal - by);
-        return part.at(table.index, there).map(named);
-      }
-      return part.columns(table).map((column) => ({ ...named(column), ...moved(column, by, table) }));
-    });
+    return columnsOf(term, table, back + by).map((column) => ({ ...column, ...movedLabel(column, by) }));
   });
-}
-
-function moved(column: TermColumn, by: number, { T, index }: TimeTable): Omit<TermColumn, "label"> {
-  const values = new Float64Array(T).fill(Number.NaN);
-  const edge = new Uint8Array(T);
-  const filled = column.filled && new Uint8Array(T);
-  const { ordinals } = index;
-  if (ordinals[T - 1]! - ordinals[0]! === T - 1) {
-    const from = Math.max(0, -by);
-    const to = Math.max(from, Math.min(T, T - by));
-    edge.fill(1);
-    if (to > from) {
-      values.set(column.values.subarray(from, to), from + by);
-      if (column.edge) edge.set(column.edge.subarray(from, to), from + by);
-      else edge.fill(0, from + by, to + by);
-      filled?.set(column.filled!.subarray(from, to), from + by);
-    }
-  } else {
-    const rowOf = rowsByPeriod(ordinals);
-    for (let row = 0; row < T; row++) {
-      const source = rowOf(row, by);
-      if (source === -1) edge[row] = 1;
-      if (source < 0) continue;
-      values[row] = column.values[source]!;
-      if (column.edge) edge[row] = column.edge[source]!;
-      if (filled) filled[row] = column.filled![source]!;
-    }
-  }
-  const uses = column.uses.map(({ column, newest, oldest }) => ({
-    column,
-    newest: newest + by,
-    oldest: oldest + by,
-  }));
-  return { values, edge, filled, uses };
 }
 
 function wholeSteps(steps: number, asked: string): void {

@@ -9,9 +9,11 @@ import { makeTerm, type Term, type TermColumn, type TermLike } from "../term.js"
  * it, whatever the sample; the card states them. Throws InputError for a term that does not vary.
  */
 export function standardise(term: TermLike): Term {
-  return makeTerm(operatorLabel("standardised", labelOf(term)), (table) =>
-    columnsOf(term, table).map((column): TermColumn => {
-      const { mean, deviation, n } = moments(column.values);
+  return makeTerm(operatorLabel("standardised", labelOf(term)), (table, back) => {
+    const present = columnsOf(term, table);
+    const wanted = back === 0 ? present : columnsOf(term, table, back);
+    return wanted.map((column, j): TermColumn => {
+      const { mean, deviation, n } = moments(present[j]!.values);
       if (!(deviation > 0)) throw new InputError(`standardise: "${column.label}" does not vary.`);
       const figure = (value: number) => written(Number(value.toPrecision(6)));
       return {
@@ -20,8 +22,8 @@ export function standardise(term: TermLike): Term {
         values: column.values.map((value) => (value - mean) / deviation),
         note: `${column.label} is standardised by mean ${figure(mean)} and standard deviation ${figure(deviation)}, over ${countedSteps(n, table.index.step)}`,
       };
-    }),
-  );
+    });
+  });
 }
 
 function moments(values: Float64Array): { mean: number; deviation: number; n: number } {

@@ -31,12 +31,7 @@ test("differences of any order and span, by their definition", async () => {
   assert.deepEqual(values(diff("x", { order: 2 }), table), [NaN, NaN, 2, 2, 2, 2, 2, 2, 2, 2]);
   assert.deepEqual(values(diff("x", { over: 3 }), table).slice(3), [9, 15, 21, 27, 33, 39, 45]);
   assert.deepEqual([...only(diff("x", { order: 2, over: 2 }), table).edge!], [1, 1, 1, 1, 0, 0, 0, 0, 0, 0]);
-  assert.deepEqual(
-    only(diff("x", { order: 2 }), table)
-      .uses.map(({ oldest }) => oldest)
-      .sort(),
-    [0, 1, 1, 2],
-  );
+  assert.deepEqual(only(diff("x", { order: 2 }), table).uses, [{ column: "x", newest: 0, oldest: 2 }]);
   agree(values(growth("x"), table).slice(1, 3), [Math.log(2), Math.log(2.5)], 15);
   assert.deepEqual(values(diff("x", { over: "season" }), await quarters(6)), [NaN, NaN, NaN, NaN, 4, 4]);
 });

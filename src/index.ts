@@ -36,6 +36,7 @@ export {
   sum,
   TimeTable,
 } from "./data/index.js";
+export type { Term, TermLike } from "./design/index.js";
 export {
   between,
   categories,
@@ -67,6 +68,7 @@ export {
   spread,
   stability,
 } from "./diagnose/index.js";
+export type { Coefficient, CovarianceEstimator, FitOptions } from "./estimate/index.js";
 export { Fit, iid } from "./estimate/index.js";
 export { InputError } from "./numeric/index.js";
 export { chart, tableOf } from "./show/index.js";

@@ -21,15 +21,18 @@ export function copyRows(table: TimeTable, column: TermColumn, usable: Usable, t
 }
 
 /** Refuses a column that does not vary: one that is zero throughout, or one that repeats the intercept. */
-export function refuseConstant(label: string, values: Float64Array, intercept: boolean, span: string): void {
+export function refuseConstant(
+  { label, whenZero = "Leave the term out, or use a longer sample." }: TermColumn,
+  values: Float64Array,
+  intercept: boolean,
+  span: string,
+): void {
   const value = values[0]!;
   if (value !== 0 && !intercept) return;
   for (let t = 1; t < values.length; t++) if (values[t] !== value) return;
   const name = JSON.stringify(label);
   if (value === 0) {
-    throw new InputError(
-      `fit: ${name} is zero in every period used (${span}). Leave the term out, or use a longer sample.`,
-    );
+    throw new InputError(`fit: ${name} is zero in every period used (${span}). ${whenZero}`);
   }
   throw new InputError(
     `fit: ${name} is constant (${value}) over the periods used and cannot be told from the intercept. Leave it out, or say intercept: false.`,

@@ -126,7 +126,7 @@ function numbers(
   right.forEach((column, j) => {
     const target = X.data.subarray((j + shift) * T, (j + shift + 1) * T);
     copyRows(table, column, usable, target);
-    refuseConstant(column.label, target, intercept, span);
+    refuseConstant(column, target, intercept, span);
   });
   return { y: outcome, X };
 }

@@ -24,6 +24,8 @@ export interface TermColumn extends Labelled {
   readonly uses: readonly Use[];
   /** What a card must say about it: the base of a set of levels. */
   readonly note?: string;
+  /** The way out where it is zero in every period used: one level of several cannot just be left out. */
+  readonly whenZero?: string;
 }
 
 /** An explanation: a function of time that makes one or more columns from a table. */

@@ -35,6 +35,8 @@ export function categories(name: string, options: CategoryOptions = {}): Term {
           filled: column.filled,
           uses: [{ column: name, newest: 0, oldest: 0 }],
           note: `groups of ${name} are measured against ${base}`,
+          whenZero:
+            "Cut the table to the sample first with .between(...), so that only groups that occur there count.",
         }),
       );
   });

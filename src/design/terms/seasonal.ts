@@ -42,6 +42,7 @@ export function seasonal(options: SeasonalOptions = {}): Term {
       values: seasons.map((at) => (at === season ? 1 : contrast === "sum-to-zero" && at === last ? -1 : 0)),
       uses: [],
       ...(note ? { note } : {}),
+      whenZero: "Use fourier(n), or a sample that has every season.",
     });
     const chosen = Array.from({ length }, (_, season) => season);
     return chosen.slice(contrast === "base" ? 1 : 0, contrast === "sum-to-zero" ? last : length).map(column);

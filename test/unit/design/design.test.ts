@@ -2,6 +2,7 @@ import assert from "node:assert/strict";
 import { test } from "node:test";
 import { load, mean } from "../../../src/data/index.js";
 import {
+  categories,
   type Design,
   type DesignOptions,
   design,
@@ -13,6 +14,7 @@ import {
   own,
   product,
   rolling,
+  seasonal,
   step,
   type TermLike,
 } from "../../../src/design/index.js";
@@ -197,6 +199,44 @@ test("infinite values and columns that do not vary over the sample are refused",
     {
       sample: [null, "2020-08"],
     },
+  );
+});
+
+test("a level that does not occur in the sample is refused with a way out that keeps the others", async () => {
+  const grouped = await load(
+    Array.from({ length: 30 }, (_, i) => ({
+      year: 1990 + i,
+      y: (i * i) % 7,
+      g: i < 10 ? "a" : i < 20 ? "b" : "c",
+    })),
+    { time: "year" },
+  );
+  refused(
+    "y",
+    categories("g"),
+    /"g: c" is zero in every period used .* Cut the table to the sample first/,
+    {
+      sample: [null, 2005],
+    },
+    grouped,
+  );
+  assert.deepEqual(design(grouped.between(undefined, 2005), "y", categories("g")).terms, [
+    "intercept",
+    "g: b",
+  ]);
+  const autumnless = await load(
+    Array.from({ length: 30 }, (_, i) => ({
+      m: `20${10 + Math.floor(i / 10)}-${String((i % 10) + 1).padStart(2, "0")}`,
+      y: i * i,
+    })),
+    { time: "m", every: "month" },
+  );
+  refused(
+    "y",
+    seasonal(),
+    /"November" is zero in every period used .* a sample that has every season/,
+    {},
+    autumnless,
   );
 });
 

@@ -108,6 +108,7 @@ test("signs with a meaning are escaped in LaTeX and Markdown", () => {
     "50\\% of \\$x\\_1\\textasciicircum{}2\\$ \\& \\textbackslash{}\\{a\\}\\textasciitilde{}\\#",
   );
   assert.equal(escapeLatex("1.2×10⁻¹² < χ²(3)"), "1.2$\\times$10$^{-12}$ $<$ $\\chi$$^{2}$(3)");
+  assert.equal(escapeLatex("Δ₁₂ x, cos 2πt/12"), "$\\Delta$$_{12}$ x, cos 2$\\pi$t/12");
   assert.equal(escapeMarkdown("a|b*c_d`e<f>"), "a\\|b\\*c\\_d\\`e&lt;f&gt;");
 });
 

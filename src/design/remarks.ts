@@ -1,6 +1,6 @@
 import { countedSteps, type Remark, type TimeTable } from "../data/index.js";
 import type { TermColumn } from "./term.js";
-import type { LeftOut } from "./usable.js";
+import { type LeftOut, listed } from "./usable.js";
 
 /** What a card must say about how a design came about. */
 export function designRemarks(
@@ -31,30 +31,29 @@ export function designRemarks(
 }
 
 function leftOutRemarks(left: readonly LeftOut[], step: TimeTable["index"]["step"]): Remark[] {
-  const reasons = new Map<string, LeftOut[]>();
-  for (const one of left) {
-    const same = reasons.get(one.reason);
-    if (same) same.push(one);
-    else reasons.set(one.reason, [one]);
-  }
-  return [...reasons].map(([reason, periods]) => ({
-    severity: periods[0]!.missing ? "caution" : "note",
-    text: `${countedSteps(periods.length, step)} left out: ${reason}`,
-  }));
+  const reasons = new Map<string, number>();
+  for (const { reason, lacks } of left)
+    if (lacks.length === 0) reasons.set(reason, (reasons.get(reason) ?? 0) + 1);
+  const remarks = [...reasons].map(
+    ([reason, count]): Remark => ({
+      severity: "note",
+      text: `${countedSteps(count, step)} left out: ${reason}`,
+    }),
+  );
+  const missing = left.filter(({ lacks }) => lacks.length > 0);
+  if (missing.length === 0) return remarks;
+  const same = missing.every(({ reason }) => reason === missing[0]!.reason);
+  const why = same
+    ? missing[0]!.reason
+    : `${listed(missing.flatMap(({ lacks }) => lacks))} are missing in some`;
+  remarks.push({ severity: "caution", text: `${countedSteps(missing.length, step)} left out: ${why}` });
+  return remarks;
 }
 
 function gapText({ index: { ordinals, step } }: TimeTable, rows: Int32Array): string | undefined {
   const first = rows[0]!;
   const last = rows[rows.length - 1]!;
-  const unused = ordinals[last]! - ordinals[first]! + 1 - rows.length;
-  if (unused === 0) return undefined;
   const absent = ordinals[last]! - ordinals[first]! - (last - first);
-  const which =
-    absent === 0
-      ? `${countedSteps(unused, step)} inside the sample ${unused === 1 ? "is" : "are"} left out`
-      : `${countedSteps(absent, step)} inside the sample ${absent === 1 ? "is" : "are"} not in the table` +
-        (unused > absent
-          ? ` and ${unused - absent} more ${unused - absent === 1 ? "is" : "are"} left out`
-          : "");
-  return `${which}; lagged products are taken in time, never across the gap`;
+  if (absent === 0) return undefined;
+  return `${countedSteps(absent, step)} inside the sample ${absent === 1 ? "is" : "are"} not in the table`;
 }

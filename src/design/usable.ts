@@ -6,8 +6,8 @@ import type { TermColumn } from "./term.js";
 export interface LeftOut {
   readonly ordinal: number;
   readonly reason: string;
-  /** Whether a value was missing, or a lag or lead reached beyond the table. */
-  readonly missing: boolean;
+  /** Labels of what is missing there; empty where a lag or lead reaches beyond the table. */
+  readonly lacks: readonly string[];
 }
 
 /** The rows that can be used, and the periods of the sample that cannot. */
@@ -63,9 +63,12 @@ export function usableRows(
     const flag = flags[row - start]!;
     if (flag === 0) rows[used++] = row;
     else {
-      const isMissing = (flag & missing) !== 0;
-      const reason = isMissing ? missingReason(lacking, row) : beyondReason(reaching, row, table);
-      left.push({ ordinal: table.index.ordinals[row]!, reason, missing: isMissing });
+      const lacks = flag & missing ? lackedAt(lacking, row) : [];
+      const reason =
+        lacks.length === 0
+          ? beyondReason(reaching, row, table)
+          : `${listed(lacks)} ${lacks.length === 1 ? "is" : "are"} missing`;
+      left.push({ ordinal: table.index.ordinals[row]!, reason, lacks });
     }
   }
   return { rows: rows.subarray(0, used), left, suspect };
@@ -88,12 +91,16 @@ function allFinite(values: Float64Array, start: number, end: number): boolean {
   return a + b + c + d === 0;
 }
 
-function missingReason(lacking: ReadonlyMap<TermColumn, readonly number[]>, row: number): string {
-  const labels = [...lacking.keys()]
+function lackedAt(lacking: ReadonlyMap<TermColumn, readonly number[]>, row: number): string[] {
+  return [...lacking.keys()]
     .filter(({ values, edge }) => Number.isNaN(values[row]!) && !edge?.[row])
     .map(({ label }) => label);
-  const named = labels.slice(0, 3).join(", ") + (labels.length > 3 ? `, and ${labels.length - 3} more` : "");
-  return `${named} ${labels.length === 1 ? "is" : "are"} missing`;
+}
+
+/** Labels, each once, the first three in full. */
+export function listed(labels: readonly string[]): string {
+  const each = [...new Set(labels)];
+  return each.slice(0, 3).join(", ") + (each.length > 3 ? `, and ${each.length - 3} more` : "");
 }
 
 // Of several lags that reach beyond the table, the longest is the one that costs the period.

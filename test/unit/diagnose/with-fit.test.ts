@@ -4,7 +4,7 @@ import { test } from "node:test";
 import { classical, neweyWest } from "../../../src/covariance/index.js";
 import { load } from "../../../src/data/index.js";
 import { lag, log, step } from "../../../src/design/index.js";
-import { codeOf } from "../../../src/diagnose/checkup/code.js";
+import { codeOf, fitCall } from "../../../src/diagnose/checkup/code.js";
 import {
   checkup,
   cointegration,
@@ -46,8 +46,12 @@ test("a monthly fit: seasonal lags from the index, labels of periods, calls a ce
   const card = checkup(m);
   assert.equal(card.coefficient, "log fare");
   assert.equal(
-    card.lines.find((line) => line.question === "dependence")?.attempt?.replace(/ar\(\d+\)/, "ar(p)"),
-    'fit(table, log("riders"), [log("fare"), lag(log("fare"), 1), step("2015-06")], { errors: ar(p) })',
+    card.lines.find((line) => line.question === "dependence")?.attempt,
+    'covariances(m, undefined, { terms: ["log fare"] })',
+  );
+  assert.equal(
+    fitCall(m, ["trend()"]),
+    'fit(table, log("riders"), [log("fare"), lag(log("fare"), 1), step("2015-06"), trend()])',
   );
   assert.match(leverage(m).finding, /^Leaving out 20\d\d-\d\d to 20\d\d-\d\d moves/);
   assert.match(stability(m, { at: "2014-01", draws: 99 }).named("Chow")[0]!.note!, /break at 2014-01/);

@@ -10,7 +10,8 @@ import { requireLevel } from "./coefficients.js";
 import type { CovarianceEstimator } from "./covariance-estimator.js";
 import { type ErrorModel, requireErrorModel } from "./errors.js";
 import { requireEstimator } from "./estimator-required.js";
-import { Fit, type FitParts } from "./fit.js";
+import { Fit } from "./fit.js";
+import type { FitParts } from "./fit-parts.js";
 import { regress } from "./regress.js";
 
 /** Options of `fit`. */

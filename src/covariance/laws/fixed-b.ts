@@ -26,46 +26,27 @@ export interface FixedB {
 export type FixedBForm = "own design" | "limit" | "limit, uneven design";
 
 const designs = new WeakMap<Scores, Map<string, ContrastDesign>>();
-const uneven = new WeakMap<Scores, Map<string, number>>();
 
 /** The contrast's design, formed once per regression and contrast. */
 export function designFor(scores: Scores, contrast: Float64Array): ContrastDesign {
-  return kept(designs, scores, contrast, () => contrastDesign(scores, contrast));
-}
-
-/** How uneven a contrast's design is; of a long one the number is kept and not the design. */
-function unevennessFor(scores: Scores, contrast: Float64Array): number {
-  return kept(uneven, scores, contrast, () =>
-    unevenness(
-      scores.span <= UNEVEN_DESIGN_UP_TO ? designFor(scores, contrast) : contrastDesign(scores, contrast),
-    ),
-  );
-}
-
-function kept<V>(
-  store: WeakMap<Scores, Map<string, V>>,
-  scores: Scores,
-  contrast: Float64Array,
-  make: () => V,
-): V {
-  let byContrast = store.get(scores);
-  if (!byContrast) {
-    byContrast = new Map();
-    store.set(scores, byContrast);
+  let ofScores = designs.get(scores);
+  if (!ofScores) {
+    ofScores = new Map();
+    designs.set(scores, ofScores);
   }
   const key = contrast.join();
-  let value = byContrast.get(key);
-  if (value === undefined) {
-    value = make();
-    if (byContrast.size > 200) byContrast.clear();
-    byContrast.set(key, value);
+  let design = ofScores.get(key);
+  if (!design) {
+    design = contrastDesign(scores, contrast);
+    if (ofScores.size > 200) ofScores.clear();
+    ofScores.set(key, design);
   }
-  return value;
+  return design;
 }
 
 export function fixedBForm(scores: Scores, contrast: Float64Array, limit = false): FixedBForm {
   if (!limit && scores.span <= OWN_DESIGN_UP_TO) return "own design";
-  if (unevennessFor(scores, contrast) <= UNEVEN) return "limit";
+  if (unevenness(scores, contrast) <= UNEVEN) return "limit";
   return !limit && scores.span <= UNEVEN_DESIGN_UP_TO ? "own design" : "limit, uneven design";
 }
 

@@ -51,13 +51,20 @@ function directly(series: Series, nu: number): Float64Array[] {
 function byChirp(series: Series, nu: number): Float64Array[] {
   const { rows: n, columns: k } = series.columns;
   const size = 2 ** Math.ceil(Math.log2(n + 2 * nu + 1));
-  const angle = (m: number): number => (Math.PI * ((m * m) % (4 * n))) / (2 * n);
+  // e^(iπm²/2n) for m up to n + ν, angles reduced in whole numbers.
+  const chirpCos = new Float64Array(n + nu);
+  const chirpSin = new Float64Array(n + nu);
+  for (let m = 0; m < n + nu; m++) {
+    const angle = (Math.PI * ((m * m) % (4 * n))) / (2 * n);
+    chirpCos[m] = Math.cos(angle);
+    chirpSin[m] = Math.sin(angle);
+  }
   const kernelRe = new Float64Array(size);
   const kernelIm = new Float64Array(size);
   for (let m = -(n - 1) - nu; m <= nu; m++) {
     const at = (m + size) % size;
-    kernelRe[at] = Math.cos(angle(m));
-    kernelIm[at] = Math.sin(angle(m));
+    kernelRe[at] = chirpCos[Math.abs(m)]!;
+    kernelIm[at] = chirpSin[Math.abs(m)]!;
   }
   fft(kernelRe, kernelIm);
   const result: Float64Array[] = [];
@@ -68,7 +75,7 @@ function byChirp(series: Series, nu: number): Float64Array[] {
     y.fill(0);
     copyRows(series, a, 0, n, x, 0);
     if (a + 1 < k) copyRows(series, a + 1, 0, n, y, 0);
-    for (let t = 0; t < n; t++) turn(x, y, t, -angle(t));
+    for (let t = 0; t < n; t++) turnBack(x, y, t, chirpCos[t]!, chirpSin[t]!);
     fft(x, y);
     for (let f = 0; f < size; f++) {
       const re = x[f]! * kernelRe[f]! - y[f]! * kernelIm[f]!;
@@ -80,8 +87,8 @@ function byChirp(series: Series, nu: number): Float64Array[] {
     const second = new Float64Array(nu);
     for (let j = 1; j <= nu; j++) {
       const minus = size - j;
-      turn(x, y, j, -angle(j));
-      turn(x, y, minus, -angle(j));
+      turnBack(x, y, j, chirpCos[j]!, chirpSin[j]!);
+      turnBack(x, y, minus, chirpCos[j]!, chirpSin[j]!);
       // Of z = a + ib, frequency ±j: A = (Z₊ + conj Z₋)/2 and B = (Z₊ − conj Z₋)/2i; half a period more turns by e^(−iπj/2n).
       const aRe = (x[j]! + x[minus]!) / (2 * size);
       const aIm = (y[j]! - y[minus]!) / (2 * size);
@@ -96,11 +103,9 @@ function byChirp(series: Series, nu: number): Float64Array[] {
   return result.slice(0, k);
 }
 
-/** (x + iy) at one place, times e^(iφ). */
-function turn(x: Float64Array, y: Float64Array, at: number, phi: number): void {
-  const c = Math.cos(phi);
-  const s = Math.sin(phi);
-  const re = x[at]! * c - y[at]! * s;
-  y[at] = x[at]! * s + y[at]! * c;
+/** (x + iy) at one place, times c − is. */
+function turnBack(x: Float64Array, y: Float64Array, at: number, c: number, s: number): void {
+  const re = x[at]! * c + y[at]! * s;
+  y[at] = y[at]! * c - x[at]! * s;
   x[at] = re;
 }

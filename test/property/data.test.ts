@@ -81,15 +81,14 @@ test("bringing a series to a coarser step preserves its total, also in two steps
   );
 });
 
-test("lag then lead gives the column back wherever both can be formed, in time and not in rows", () => {
+test("lag then lead is the column itself; a lag alone is what stood there, in time and not in rows", () => {
   fc.assert(
     fc.property(tables("month"), fc.integer({ min: 0, max: 6 }), (months, steps) => {
       const [back] = columnsOf(lead(lag("x", steps), steps), months);
       const x = months.numbers("x");
       const at = new Map(Array.from(months.index.ordinals, (ordinal, row) => [ordinal, row]));
       back!.values.forEach((value, row) => {
-        const there = at.has(months.index.ordinals[row]! + steps);
-        assert.ok(Object.is(value, there ? x[row] : Number.NaN), `row ${row}`);
+        assert.ok(Object.is(value, x[row]), `row ${row}`);
       });
       const [lagged] = columnsOf(lag("x", steps), months);
       lagged!.values.forEach((value, row) => {

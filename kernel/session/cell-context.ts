@@ -5,6 +5,8 @@ import type { Output } from "./output.js";
 export interface CellContext {
   emit(output: Output): void;
   ask(question: string, hidden: boolean): string;
+  /** Whether the person wants the cell to end. */
+  stopRequested(): boolean;
   /** Ids of displays of the session. */
   readonly shown: Set<string>;
   nextDisplayId(): string;

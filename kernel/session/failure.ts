@@ -1,4 +1,6 @@
+import { inspected } from "./bundle.js";
 import type { Problem } from "./compiler/compiler.js";
+import { Interrupted, isInterrupted } from "./interruption.js";
 
 /** How a cell failed, as the messaging protocol writes it. */
 export interface CellFailure {
@@ -33,15 +35,13 @@ export interface CellScript {
 
 /** What a cell threw, with the lines of cells that led to it and nothing of the kernel's. */
 export function thrownFailure(thrown: unknown, scripts: ReadonlyMap<string, CellScript>): CellFailure {
-  if (!isError(thrown)) {
-    return { ename: "Thrown", evalue: String(thrown), traceback: [`Thrown: ${String(thrown)}`] };
+  if (isInterrupted(thrown)) {
+    const { name: ename, message: evalue } = new Interrupted();
+    return { ename, evalue, traceback: [`${ename}: ${evalue}`] };
   }
-  if (interrupted(thrown)) {
-    return {
-      ename: "Interrupted",
-      evalue: "the cell was interrupted",
-      traceback: ["Interrupted: the cell was interrupted"],
-    };
+  if (!isError(thrown)) {
+    const evalue = typeof thrown === "string" ? thrown : inspected(thrown);
+    return { ename: "Thrown", evalue, traceback: [`Thrown: ${evalue}`] };
   }
   const head = `${thrown.name}: ${thrown.message}`;
   return {
@@ -55,16 +55,13 @@ function isError(thrown: unknown): thrown is Error {
   return typeof thrown === "object" && thrown !== null && "message" in thrown && "name" in thrown;
 }
 
-function interrupted(error: Error): boolean {
-  return (
-    error.message === "Interrupted asynchronously" ||
-    (error as NodeJS.ErrnoException).code === "ERR_SCRIPT_EXECUTION_INTERRUPTED"
-  );
-}
-
 function causes(error: Error): string[] {
-  const { cause } = error;
-  return isError(cause) ? [`  caused by ${cause.name}: ${cause.message}`] : [];
+  const { cause, errors } = error as Error & { errors?: unknown };
+  const several = Array.isArray(errors) ? errors.filter(isError).slice(0, 5) : [];
+  return [
+    ...several.map(({ name, message }) => `  - ${name}: ${message}`),
+    ...(isError(cause) ? [`  caused by ${cause.name}: ${cause.message}`] : []),
+  ];
 }
 
 function frames(error: Error, scripts: ReadonlyMap<string, CellScript>): string[] {

@@ -1,3 +1,5 @@
+import { displaySymbol } from "../../src/data/index.js";
+import { inspected } from "./bundle.js";
 import type { Compiler } from "./compiler/compiler.js";
 import type { Bundle } from "./output.js";
 
@@ -7,13 +9,17 @@ export interface Inspection {
   readonly data: Bundle;
 }
 
-/** Type and documentation of the name at an offset; just before it when the offset is behind a name or a parenthesis. */
+/**
+ * Type and documentation of the name at an offset; just before it when the offset is behind a name or a parenthesis.
+ * With `detail` 1 or more, the present value of a variable too.
+ */
 export function inspectAt(
   compiler: Compiler,
   declarations: string,
+  values: Readonly<Record<string, unknown>>,
   code: string,
   offset: number,
-  _detail: number,
+  detail: number,
 ): Inspection {
   for (const at of [offset, offset - 1, calledName(code, offset)]) {
     if (at < 0 || at > code.length) continue;
@@ -26,14 +32,35 @@ export function inspectAt(
     const tags = (info.tags ?? []).map(
       (tag) => `@${tag.name} ${(tag.text ?? []).map(({ text }) => text).join("")}`,
     );
-    const plain = [signature, documentation, ...tags].filter(Boolean).join("\n\n");
+    const value = detail > 0 ? presentValue(nameAt(code, at), values) : "";
+    const plain = [signature, documentation, ...tags, value].filter(Boolean).join("\n\n");
     const fence = "```";
-    const markdown = [`${fence}typescript\n${signature}\n${fence}`, documentation, ...tags]
+    const shown = value && `${fence}\n${value}\n${fence}`;
+    const markdown = [`${fence}typescript\n${signature}\n${fence}`, documentation, ...tags, shown]
       .filter(Boolean)
       .join("\n\n");
     if (plain) return { found: true, data: { "text/plain": plain, "text/markdown": markdown } };
   }
   return { found: false, data: {} };
+}
+
+function nameAt(code: string, offset: number): string {
+  const before = /[\p{L}\p{N}_$]*$/u.exec(code.slice(0, offset))![0];
+  const after = /^[\p{L}\p{N}_$]*/u.exec(code.slice(offset))![0];
+  return code[offset - before.length - 1] === "." ? "" : before + after;
+}
+
+/** A variable's value as text: as it shows, if that can be had at once. Of functions the type says all. */
+function presentValue(name: string, values: Readonly<Record<string, unknown>>): string {
+  const value = Object.hasOwn(values, name) ? values[name] : undefined;
+  if (value === undefined || typeof value === "function") return "";
+  try {
+    const bundle = (value as Record<symbol, (() => unknown) | undefined> | null)?.[displaySymbol]?.();
+    const text = (bundle as { "text/plain"?: unknown } | undefined)?.["text/plain"];
+    return typeof text === "string" ? text : inspected(value);
+  } catch {
+    return inspected(value);
+  }
 }
 
 /** Offset of the name of the call whose parentheses hold the place, or −1. */

@@ -1,27 +1,41 @@
 import { createRequire } from "node:module";
-import { dirname, isAbsolute, join } from "node:path";
-import { pathToFileURL } from "node:url";
-import { Script } from "node:vm";
+import { dirname, join } from "node:path";
+import { constants, Script } from "node:vm";
 import * as lagbook from "../../src/index.js";
 import * as notebook from "./notebook.js";
 
 const ours: Readonly<Record<string, unknown>> = { lagbook, "lagbook/notebook": notebook };
 
+/** Codes of "`require` cannot load this, but a real import may". */
+const importable = new Set([
+  "ERR_REQUIRE_ASYNC_MODULE",
+  "ERR_REQUIRE_ESM",
+  "ERR_REQUIRE_CYCLE_MODULE",
+  "ERR_PACKAGE_PATH_NOT_EXPORTED",
+]);
+
 /**
  * The `require` of cells: Lagbook itself from any folder, packages from the notebook's folder. Packages that only a
- * real import can load (their modules await at the top level) are imported beforehand by `prepare`.
+ * real import can load (their modules await at the top level, or they export nothing to `require`) are imported
+ * beforehand by `prepare`.
  */
 export class CellModules {
   readonly #require: NodeJS.Require;
+  readonly #import: (specifier: string) => Promise<unknown>;
   readonly #imported = new Map<string, unknown>();
   readonly #directory: string;
   /** CommonJS of local TypeScript files, by the path of their JavaScript. */
   readonly #sources = new Map<string, string>();
   readonly #loaded = new Map<string, { exports: unknown }>();
+  /** Where cells are, as a CommonJS module knows it. */
+  readonly places: { readonly __dirname: string; readonly __filename: string };
 
   constructor(directory: string) {
+    const file = join(directory, "cell.js");
     this.#directory = directory;
-    this.#require = createRequire(join(directory, "cell.js"));
+    this.places = { __dirname: directory, __filename: file };
+    this.#require = createRequire(file);
+    this.#import = importFrom(file);
   }
 
   /** Loads what `require` cannot. */
@@ -29,54 +43,28 @@ export class CellModules {
     for (const specifier of specifiers) {
       if (specifier in ours || this.#imported.has(specifier)) continue;
       try {
-        this.#require(specifier);
+        this.load(specifier);
       } catch (error) {
-        const { code } = error as NodeJS.ErrnoException;
-        if (
-          code === "ERR_REQUIRE_ASYNC_MODULE" ||
-          code === "ERR_REQUIRE_ESM" ||
-          code === "ERR_PACKAGE_PATH_NOT_EXPORTED"
-        ) {
-          await this.#import(specifier);
-        }
+        const code = (error as NodeJS.ErrnoException | undefined)?.code;
+        if (code && importable.has(code)) this.#imported.set(specifier, await this.#import(specifier));
         // Any other failure shows when the cell itself asks for the module.
       }
     }
   }
 
-  async #import(specifier: string): Promise<void> {
-    const target =
-      isAbsolute(specifier) || specifier.startsWith(".") ? join(this.#directory, specifier) : undefined;
-    const href = target ? pathToFileURL(target).href : pathToFileURL(this.#resolve(specifier)).href;
-    this.#imported.set(specifier, await import(href));
-  }
-
-  /** The file that an import of a package leads to, which `require.resolve` cannot tell when only imports are exported. */
-  #resolve(specifier: string): string {
-    const { resolve } = createRequire(join(this.#directory, "cell.js"));
-    try {
-      return resolve(specifier);
-    } catch {
-      const [scope, name] = specifier.split("/");
-      const packageName = scope!.startsWith("@") ? `${scope}/${name}` : scope!;
-      for (const folder of resolve.paths(specifier) ?? []) {
-        const file = join(folder, packageName, "package.json");
-        try {
-          const { exports, module, main } = this.#require(file);
-          const entry = entryOf(exports) ?? module ?? main ?? "index.js";
-          return join(folder, packageName, entry);
-        } catch {}
-      }
-      throw new Error(`Cannot find module '${specifier}' from ${this.#directory}`);
-    }
-  }
-
-  /** Takes in the compiled forms of local TypeScript files; a changed one is loaded anew. */
+  /** Takes in the compiled forms of local TypeScript files. When one has changed, all are loaded anew: others may use it. */
   sideOutputs(outputs: readonly { path: string; data: string }[]): void {
-    for (const { path, data } of outputs) {
-      this.#sources.set(path, data);
-      this.#loaded.delete(path);
-    }
+    if (outputs.some(({ path }) => this.#sources.has(path))) this.#loaded.clear();
+    for (const { path, data } of outputs) this.#sources.set(path, data);
+  }
+
+  /** The `require` of cells; `prepared` is what a dynamic import of a computed name waits for. */
+  get require(): ((specifier: string) => unknown) & { resolve: unknown; prepared: unknown } {
+    const prepared = async (specifier: string) => {
+      await this.prepare([specifier]);
+      return this.load(specifier);
+    };
+    return Object.assign(this.load, { resolve: this.#require.resolve, prepared });
   }
 
   /** What a cell gets for a module name. */
@@ -86,7 +74,8 @@ export class CellModules {
     if (specifier in ours) return ours[specifier];
     if (this.#imported.has(specifier)) return this.#imported.get(specifier);
     const path = this.#sourcePath(folder, specifier);
-    return path === undefined ? createRequire(join(folder, "cell.js"))(specifier) : this.#loadSource(path);
+    if (path !== undefined) return this.#loadSource(path);
+    return (folder === this.#directory ? this.#require : createRequire(join(folder, "cell.js")))(specifier);
   }
 
   #sourcePath(folder: string, specifier: string): string | undefined {
@@ -109,16 +98,33 @@ export class CellModules {
   }
 }
 
-function entryOf(exports: unknown): string | undefined {
-  if (typeof exports === "string") return exports;
-  if (typeof exports !== "object" || exports === null) return undefined;
-  const map = exports as Record<string, unknown>;
-  const root = map["."] ?? map["import"] ?? map["node"] ?? map["default"];
-  return root === exports ? undefined : entryOf(root);
+/** A real import that looks for packages from a file's folder. */
+function importFrom(file: string): (specifier: string) => Promise<unknown> {
+  const script = new Script("(specifier) => import(specifier)", {
+    filename: file,
+    importModuleDynamically: constants.USE_MAIN_CONTEXT_DEFAULT_LOADER,
+  });
+  const load = script.runInThisContext() as (specifier: string) => Promise<unknown>;
+  let warned = false;
+  return (specifier) => {
+    if (warned) return load(specifier);
+    // Node warns once that this may change, in the middle of the user's cell.
+    warned = true;
+    const { emitWarning } = process;
+    process.emitWarning = () => {};
+    try {
+      return load(specifier);
+    } finally {
+      process.emitWarning = emitWarning;
+    }
+  };
 }
 
 /** Names that cells have without importing them, by the module that they come from. */
 export const cellNames: readonly { module: string; names: readonly string[] }[] = [
   { module: "lagbook", names: Object.keys(lagbook) },
-  { module: "lagbook/notebook", names: Object.keys(notebook) },
+  {
+    module: "lagbook/notebook",
+    names: ["ask", "clearOutput", "display"] satisfies (keyof typeof notebook)[],
+  },
 ];

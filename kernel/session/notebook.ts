@@ -1,10 +1,19 @@
 import { bundleOf } from "./bundle.js";
 import { currentCell } from "./cell-context.js";
 
-/** What `display` returns: the same place in the notebook, to be written anew. */
-export interface Shown {
+/** What `display` returns: the same place in the notebook, to be written anew. It shows nothing itself. */
+export class Shown {
+  readonly #show: (value: unknown) => Promise<void>;
+
+  /** Made by `display`. */
+  constructor(show: (value: unknown) => Promise<void>) {
+    this.#show = show;
+  }
+
   /** Shows another value in the same place. */
-  update(value: unknown): Promise<void>;
+  update(value: unknown): Promise<void> {
+    return this.#show(value);
+  }
 }
 
 /**
@@ -16,11 +25,11 @@ export async function display(value: unknown, options: { readonly id?: string } 
   const id = options.id ?? cell.nextDisplayId();
   const again = cell.shown.has(id);
   cell.shown.add(id);
-  const send = async (next: unknown, type: "display_data" | "update_display_data") => {
+  const show = async (next: unknown, type: "display_data" | "update_display_data") => {
     cell.emit({ type, data: await bundleOf(next), metadata: {}, transient: { display_id: id } });
   };
-  await send(value, again ? "update_display_data" : "display_data");
-  return { update: (next) => send(next, "update_display_data") };
+  await show(value, again ? "update_display_data" : "display_data");
+  return new Shown((next) => show(next, "update_display_data"));
 }
 
 /** Empties the cell's output, at once or (`wait`) when the next output comes. */

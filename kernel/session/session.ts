@@ -1,16 +1,20 @@
-import { createRequire } from "node:module";
 import { bundleOf } from "./bundle.js";
 import { type CellContext, cellContext } from "./cell-context.js";
-import { type Compiler, createCompiler, importsOf } from "./compiler/compiler.js";
+import { type Compiled, type Compiler, createCompiler, importsOf } from "./compiler/compiler.js";
 import { type Completions, complete } from "./complete.js";
+import { CellExecutor } from "./executor.js";
 import { type CellFailure, type CellScript, thrownFailure, typeFailure } from "./failure.js";
+import { guardErrors } from "./guard-errors.js";
 import { guardExit } from "./guard-exit.js";
 import { type Inspection, inspectAt } from "./inspect.js";
+import { Interrupted, Interruption } from "./interruption.js";
 import { type Completeness, isComplete } from "./is-complete.js";
 import { CellModules, cellNames } from "./modules.js";
+import { Shown } from "./notebook.js";
 import type { Bundle, Output } from "./output.js";
 import { showProgress } from "./progress.js";
-import { runScript } from "./run-script.js";
+import { runScript, watched } from "./run-script.js";
+import { Scope } from "./scope.js";
 import { captureStreams } from "./streams.js";
 
 /** Options of a session. */
@@ -19,8 +23,10 @@ export interface SessionOptions {
   readonly directory: string;
   /** Receives everything that cells send. */
   emit(output: Output): void;
-  /** Asks the person for a line; without it `ask` fails. Waits, blocking. */
-  readInput?(question: string, hidden: boolean): string;
+  /** Asks the person for a line; without it `ask` fails. Waits, blocking; undefined when interrupted. */
+  readInput?(question: string, hidden: boolean): string | undefined;
+  /** Whether the person has asked, from another thread, for the running cell to end. */
+  stopRequested?(): boolean;
 }
 
 /** Options of one execution. */
@@ -61,8 +67,6 @@ export interface Session {
   close(): void;
 }
 
-const require = createRequire(import.meta.url);
-
 /** Opens a session. Takes about a second, most of it for the compiler. */
 export async function createSession(options: SessionOptions): Promise<Session> {
   const before = process.cwd();
@@ -76,42 +80,36 @@ export async function createSession(options: SessionOptions): Promise<Session> {
   return session;
 }
 
+type Ran = { readonly value: unknown } | { readonly failure: CellFailure };
+
 class OpenSession implements Session {
   readonly #options: SessionOptions;
   readonly #compiler: Compiler;
   readonly #modules: CellModules;
-  readonly #executor: import("tslab/dist/executor.js").Executor;
+  readonly #executor: CellExecutor;
+  readonly #scope = new Scope();
   readonly #scripts = new Map<string, CellScript>();
   readonly #shown = new Set<string>();
   readonly #before: string;
+  readonly #unguard: () => void;
   #declarations = "";
   #count = 0;
   #displays = 0;
   #runs = 0;
-  #output = "";
-  #awaits = false;
-  #thrown: { error: unknown } | undefined;
-  #rejectPending: ((error: Error) => void) | undefined;
+  #interruption = new Interruption();
+  #last: CellContext | undefined;
 
   constructor(options: SessionOptions, compiler: Compiler, before: string) {
     this.#options = options;
     this.#compiler = compiler;
     this.#before = before;
     this.#modules = new CellModules(options.directory);
-    const { createExecutor } = require("tslab/dist/executor.js") as typeof import("tslab/dist/executor.js");
-    // The executor asks for a conversion; the cell has been compiled before and only its call is handed over.
-    const converter = Object.assign(Object.create(compiler.converter), {
-      convert: () => ({ output: this.#output, hasToplevelAwait: this.#awaits, diagnostics: [] }),
-    });
-    this.#executor = createExecutor(
-      options.directory,
-      { node: converter, browser: converter, close: () => {} },
-      { log: () => {}, error: (error: unknown) => (this.#thrown = { error }) },
-    );
+    this.#executor = new CellExecutor(options.directory, compiler.converter);
+    this.#unguard = guardErrors((error, cell) => this.#tellLate(error, cell ?? this.#last));
   }
 
   get values(): Readonly<Record<string, unknown>> {
-    return this.#executor.locals;
+    return this.#scope.names;
   }
 
   /** Runs the hidden first cell that brings the cell functions into scope. */
@@ -125,6 +123,8 @@ class OpenSession implements Session {
       emit: () => {},
     });
     if (reply.status === "error") throw new Error(`the cell functions cannot be loaded: ${reply.evalue}`);
+    this.#scope.open();
+    this.#last = undefined;
     showProgress();
   }
 
@@ -135,14 +135,20 @@ class OpenSession implements Session {
     const count = this.#count;
     options.started?.(count);
     const emit = options.emit ?? ((output: Output) => this.#options.emit(output));
-    const context = this.#context(emit);
+    this.#interruption = new Interruption();
+    const context = this.#context(emit, this.#interruption);
+    this.#last = context;
     const run = await this.#run(code, context, `cell [${count}]`);
-    if ("failure" in run) return this.#fail(run.failure, count, emit, silent);
-    if (!silent && run.value !== undefined) {
-      const data = await cellContext
-        .run(context, () => this.#orInterrupted(bundleOf(run.value)))
-        .catch(() => undefined);
-      if (data) emit({ type: "execute_result", data, metadata: {}, execution_count: count });
+    const shown =
+      "failure" in run || silent || run.value === undefined || run.value instanceof Shown
+        ? run
+        : await this.#bundle(run.value, context);
+    if ("failure" in shown) {
+      if (!silent) emit({ type: "error", ...shown.failure });
+      return { status: "error", execution_count: count, ...shown.failure };
+    }
+    if ("data" in shown) {
+      emit({ type: "execute_result", data: shown.data, metadata: {}, execution_count: count });
     }
     const expressions = await this.#evaluate(options.userExpressions ?? {}, context);
     return { status: "ok", execution_count: count, user_expressions: expressions };
@@ -153,7 +159,7 @@ class OpenSession implements Session {
   }
 
   inspect(code: string, offset: number, detail = 0): Inspection {
-    return inspectAt(this.#compiler, this.#declarations, code, offset, detail);
+    return inspectAt(this.#compiler, this.#declarations, this.values, code, offset, detail);
   }
 
   isComplete(code: string): Completeness {
@@ -161,79 +167,72 @@ class OpenSession implements Session {
   }
 
   interrupt(): void {
-    this.#executor.interrupt();
-    this.#rejectPending?.(new Error("Interrupted asynchronously"));
+    this.#interruption.request();
   }
 
   close(): void {
+    this.#unguard();
     this.#executor.close();
     this.#compiler.close();
     process.chdir(this.#before);
   }
 
-  #context(emit: (output: Output) => void): CellContext {
+  #context(emit: (output: Output) => void, interruption: Interruption): CellContext {
     return {
       emit,
       ask: (question, hidden) => {
-        if (this.#options.readInput) return this.#options.readInput(question, hidden);
-        throw new Error("ask: there is nobody to ask here");
+        if (!this.#options.readInput) throw new Error("ask: there is nobody to ask here");
+        const answer = this.#options.readInput(question, hidden);
+        if (answer === undefined) throw new Interrupted();
+        return answer;
       },
+      stopRequested: () =>
+        interruption.requested ||
+        (interruption === this.#interruption && this.#options.stopRequested?.() === true),
       shown: this.#shown,
       nextDisplayId: () => `lagbook-${process.pid}-${++this.#displays}`,
     };
   }
 
-  #fail(failure: CellFailure, count: number, emit: (output: Output) => void, silent: boolean): ExecuteReply {
-    if (!silent) emit({ type: "error", ...failure });
-    return { status: "error", execution_count: count, ...failure };
-  }
-
   /** Compiles and runs a cell, and gives the value of its last expression, awaited. */
-  async #run(
-    code: string,
-    context: CellContext,
-    name: string,
-  ): Promise<{ value: unknown } | { failure: CellFailure }> {
-    const compiled = this.#compiler.compile(this.#declarations, code);
-    if ("problems" in compiled) return { failure: typeFailure(compiled.problems, code) };
-    const exports = this.#executor.locals;
-    const file = `lagbook-cell-${++this.#runs}.js`;
-    this.#scripts.set(file, { source: code, name, sourceLine: compiled.sourceLine });
-    this.#modules.sideOutputs(compiled.sideOutputs);
+  async #run(code: string, context: CellContext, name: string): Promise<Ran> {
     try {
-      await this.#modules.prepare(importsOf(code));
-    } catch (error) {
-      return { failure: thrownFailure(error, this.#scripts) };
-    }
-    this.#awaits = compiled.style !== "plain";
-    this.#output = `return globalThis[Symbol.for("lagbook.run")]();`;
-    (globalThis as Record<symbol, unknown>)[Symbol.for("lagbook.run")] = () =>
-      runScript(compiled, file, exports, this.#modules.load);
-    this.#thrown = undefined;
-    const ok = await cellContext.run(context, () => this.#executor.execute("cell"));
-    // A cell that failed half-way keeps the names that it had set.
-    if (compiled.declarations !== "" || ok) this.#declarations = compiled.declarations;
-    if (!ok) return { failure: thrownFailure(this.#thrown!.error, this.#scripts) };
-    if (compiled.lastValue === undefined) return { value: undefined };
-    const value = exports[compiled.lastValue];
-    delete exports[compiled.lastValue];
-    if (!isThenable(value)) return { value };
-    try {
-      return { value: await cellContext.run(context, () => this.#orInterrupted(value)) };
+      const compiled = this.#compiler.compile(this.#declarations, code);
+      if ("problems" in compiled) return { failure: typeFailure(compiled.problems, code) };
+      const file = `lagbook-cell-${++this.#runs}.js`;
+      this.#scripts.set(file, { source: code, name, sourceLine: compiled.sourceLine });
+      this.#modules.sideOutputs(compiled.sideOutputs);
+      const value = await cellContext.run(context, () => this.#call(compiled, code, file));
+      return { value };
     } catch (error) {
       return { failure: thrownFailure(error, this.#scripts) };
     }
   }
 
-  /** Waits for a value unless the interrupt comes first. */
-  async #orInterrupted<V>(value: PromiseLike<V>): Promise<V> {
-    const interrupted = new Promise<never>((_, reject) => {
-      this.#rejectPending = reject;
-    });
+  async #call(compiled: Extract<Compiled, { script: string }>, code: string, file: string): Promise<unknown> {
+    const interruption = this.#interruption;
+    await this.#modules.prepare(importsOf(code));
+    const { require, places } = this.#modules;
+    const given = { exports: this.#scope.names, require, ...places };
+    const thrown = await this.#executor.run(
+      () => runScript(compiled, file, given, interruption),
+      compiled.style === "generator",
+    );
+    // A cell that fails half-way keeps the names that it has set.
+    this.#declarations = compiled.declarations;
+    if (thrown) throw thrown.error;
+    if (compiled.lastValue === undefined) return undefined;
+    const value = this.#scope.take(compiled.lastValue);
+    return isThenable(value) ? interruption.orInterrupted(value) : value;
+  }
+
+  /** How a value shows; made under a watch, since a display may take its time too. */
+  async #bundle(value: unknown, context: CellContext): Promise<{ data: Bundle } | { failure: CellFailure }> {
     try {
-      return await Promise.race([value, interrupted]);
-    } finally {
-      this.#rejectPending = undefined;
+      const bundle = () => this.#interruption.orInterrupted(bundleOf(value, watched));
+      return { data: await cellContext.run(context, bundle) };
+    } catch (error) {
+      return { failure: thrownFailure(error, this.#scripts) };
     }
   }
 
@@ -241,12 +240,18 @@ class OpenSession implements Session {
     const results: Bundle = {};
     for (const [name, expression] of Object.entries(expressions)) {
       const run = await this.#run(expression, context, `expression ${name}`);
+      const shown = "failure" in run ? run : await this.#bundle(run.value, context);
       results[name] =
-        "failure" in run
-          ? { status: "error", ...run.failure }
-          : { status: "ok", data: await bundleOf(run.value), metadata: {} };
+        "failure" in shown ? { status: "error", ...shown.failure } : { status: "ok", ...shown, metadata: {} };
     }
     return results;
+  }
+
+  /** Tells of an error that came when its cell no longer waited for it. */
+  #tellLate(error: unknown, cell: CellContext | undefined): void {
+    const text = `${thrownFailure(error, this.#scripts).traceback.join("\n")}\n`;
+    if (cell) cell.emit({ type: "stream", name: "stderr", text });
+    else process.stderr.write(error instanceof Error ? `${error.stack}\n` : text);
   }
 }
 

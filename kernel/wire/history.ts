@@ -3,7 +3,7 @@ export interface Entry {
   readonly session: number;
   readonly line: number;
   readonly input: string;
-  readonly output: string | null;
+  output: string | null;
 }
 
 /** The cells of this session, as `history_request` asks for them. */
@@ -12,6 +12,12 @@ export class History {
 
   add(line: number, input: string): void {
     this.#entries.push({ session: 1, line, input, output: null });
+  }
+
+  /** Adds the result of the cell that was added last. */
+  addOutput(output: string): void {
+    const last = this.#entries.at(-1);
+    if (last) last.output = output;
   }
 
   /** The `history` of a reply: [session, line, input], with the output beside the input when it is wanted. */

@@ -8,14 +8,21 @@ const gatherMilliseconds = 20;
  * a loop that prints line by line would drown the front end otherwise.
  */
 export class GatheringPublisher {
-  readonly #send: (message: Message, topic: string) => void;
+  readonly #send: (message: Message, topic: string) => Promise<void>;
   readonly #session: string;
+  readonly #sent: (length: number) => void;
   #gathered: { parent: Header | Record<string, never>; name: string; texts: string[] } | undefined;
   #timer: NodeJS.Timeout | undefined;
 
-  constructor(send: (message: Message, topic: string) => void, session: string) {
+  /** @param sent is told of stream text that has been sent: its length */
+  constructor(
+    send: (message: Message, topic: string) => Promise<void>,
+    session: string,
+    sent: (length: number) => void,
+  ) {
     this.#send = send;
     this.#session = session;
+    this.#sent = sent;
   }
 
   publish(kind: string, content: Record<string, unknown>, parent: Header | Record<string, never>): void {
@@ -24,7 +31,7 @@ export class GatheringPublisher {
       return;
     }
     this.flush();
-    this.#send(makeMessage(kind, content, parent, this.#session), kind);
+    void this.#send(makeMessage(kind, content, parent, this.#session), kind);
   }
 
   #gather(name: string, text: string, parent: Header | Record<string, never>): void {
@@ -42,7 +49,9 @@ export class GatheringPublisher {
     clearTimeout(this.#timer);
     const { parent, name, texts } = this.#gathered;
     this.#gathered = undefined;
-    this.#send(makeMessage("stream", { name, text: texts.join("") }, parent, this.#session), "stream");
+    const text = texts.join("");
+    const message = makeMessage("stream", { name, text }, parent, this.#session);
+    void this.#send(message, "stream").then(() => this.#sent(text.length));
   }
 }
 

@@ -1,17 +1,19 @@
-import type { Output, Session, SessionOptions } from "../session/index.js";
+import type { ExecuteOptions, ExecuteReply, Output, Session, SessionOptions } from "../session/index.js";
+import { answerMemory, takeAnswer } from "./answer.js";
 import type { Asker, ToSession, ToSockets } from "./between.js";
 import { toPoints, toUnits } from "./code-points.js";
 import { History } from "./history.js";
 import type { Header } from "./message.js";
+import type { SharedState } from "./shared.js";
 
 type Request = Extract<ToSession, { type: "request" }>;
 type Content = Readonly<Record<string, unknown>>;
-const inputBytes = 65_536;
 
 /** Answers the requests of the shell channel one after another. */
 export class Requests {
   readonly #tell: (message: ToSockets) => void;
   readonly #drain: () => void;
+  readonly #shared: SharedState;
   readonly #history = new History();
   readonly #queue: Request[] = [];
   #session!: Session;
@@ -20,31 +22,24 @@ export class Requests {
   #asker: Asker | undefined;
   #allowInput = false;
 
-  private constructor(tell: (message: ToSockets) => void, drain: () => void) {
+  private constructor(tell: (message: ToSockets) => void, drain: () => void, shared: SharedState) {
     this.#tell = tell;
     this.#drain = drain;
+    this.#shared = shared;
   }
 
   static async open(
     tell: (message: ToSockets) => void,
     open: (options: Omit<SessionOptions, "directory">) => Promise<Session>,
     drain: () => void,
+    shared: SharedState,
   ): Promise<Requests> {
-    const requests = new Requests(tell, drain);
+    const requests = new Requests(tell, drain, shared);
     requests.#session = await open({
       emit: (output) => requests.#publish(output, requests.#asker?.header ?? {}),
       readInput: (question, hidden) => requests.#readInput(question, hidden),
+      stopRequested: () => shared.stopRequested,
     });
-    // A timer or promise of an earlier cell that fails is told to the cell that ran last.
-    for (const event of ["uncaughtException", "unhandledRejection"] as const) {
-      process.on(event, (error: unknown) => {
-        const text = error instanceof Error ? (error.stack ?? error.message) : String(error);
-        requests.#publish(
-          { type: "stream", name: "stderr", text: `${text}\n` },
-          requests.#asker?.header ?? {},
-        );
-      });
-    }
     return requests;
   }
 
@@ -122,27 +117,36 @@ export class Requests {
     this.#asker = { identities: request.identities, header };
     this.#allowInput = content["allow_stdin"] !== false;
     this.#tell({ type: "cell", parent: header });
-    this.#tell({ type: "running", cell: ++this.#cell });
-    const reply = await this.#session.execute(code, {
-      silent,
-      storeHistory,
-      userExpressions: (content["user_expressions"] ?? {}) as Record<string, string>,
-      emit: (output) => this.#publish(output, header),
-      started: (count) => {
-        if (silent) return;
-        if (storeHistory) this.#history.add(count, code);
-        this.#tell({
-          type: "publish",
-          parent: header,
-          kind: "execute_input",
-          content: { code, execution_count: count },
-        });
-      },
-    });
-    this.#tell({ type: "running", cell: undefined });
+    const userExpressions = (content["user_expressions"] ?? {}) as Record<string, string>;
+    const reply = await this.#run(code, header, { silent, storeHistory, userExpressions });
     const aborted = reply.status === "error" && content["stop_on_error"] !== false ? this.#takeWaiting() : [];
     this.#reply(request, reply.status === "ok" ? { payload: [], ...reply } : { ...reply });
     for (const waiting of aborted) this.#abort(waiting);
+  }
+
+  async #run(code: string, header: Header, options: ExecuteOptions): Promise<ExecuteReply> {
+    const { silent, storeHistory } = options;
+    this.#shared.stopRequested = false;
+    this.#tell({ type: "running", cell: ++this.#cell });
+    try {
+      return await this.#session.execute(code, {
+        ...options,
+        emit: (output) => {
+          if (output.type === "execute_result" && storeHistory) {
+            this.#history.addOutput(String(output.data["text/plain"] ?? ""));
+          }
+          this.#publish(output, header);
+        },
+        started: (count) => {
+          if (silent) return;
+          if (storeHistory) this.#history.add(count, code);
+          const input = { code, execution_count: count };
+          this.#tell({ type: "publish", parent: header, kind: "execute_input", content: input });
+        },
+      });
+    } finally {
+      this.#tell({ type: "running", cell: undefined });
+    }
   }
 
   /** The execute requests that were waiting when a cell failed. */
@@ -182,14 +186,11 @@ export class Requests {
     };
   }
 
-  #readInput(question: string, hidden: boolean): string {
+  #readInput(question: string, hidden: boolean): string | undefined {
     if (!this.#asker || !this.#allowInput) throw new Error("ask: this front end does not answer questions");
-    const buffer = new SharedArrayBuffer(8 + inputBytes);
-    const flags = new Int32Array(buffer, 0, 2);
-    this.#tell({ type: "ask", asker: this.#asker, prompt: question, password: hidden, reply: buffer });
-    Atomics.wait(flags, 0, 0);
-    if (Atomics.load(flags, 0) === 2) throw new Error("Interrupted asynchronously");
-    return Buffer.from(new Uint8Array(buffer, 8, flags[1])).toString("utf8");
+    const memory = answerMemory();
+    this.#tell({ type: "ask", asker: this.#asker, prompt: question, password: hidden, reply: memory });
+    return takeAnswer(memory);
   }
 
   #reply(request: Request, content: Record<string, unknown>): void {
@@ -208,6 +209,7 @@ export class Requests {
 
   #publish(output: Output, parent: Header | Record<string, never>): void {
     const { type, ...content } = output;
+    if (output.type === "stream") this.#shared.handOver(output.text.length);
     this.#tell({ type: "publish", parent, kind: type, content });
   }
 }

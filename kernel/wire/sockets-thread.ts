@@ -1,25 +1,34 @@
 import { randomUUID } from "node:crypto";
 import { type MessagePort, workerData } from "node:worker_threads";
 import { Publisher, Reply, Router } from "zeromq";
+import { giveAnswer } from "./answer.js";
 import type { Asker, ToSession, ToSockets } from "./between.js";
 import { address, type Connection } from "./connection.js";
 import { interruptLadder } from "./interrupt-ladder.js";
 import { kernelInfo } from "./kernel-info.js";
 import { type Header, type Message, makeMessage } from "./message.js";
 import { GatheringPublisher } from "./publisher.js";
+import { SharedState } from "./shared.js";
 import { decode, encode } from "./signing.js";
 
 /*
  * The thread that owns every socket. It answers the heartbeat, the control channel and questions about the kernel
  * while the other thread computes, and passes everything else on.
  */
-const { connection, port } = workerData as { connection: Connection; port: MessagePort };
+const { connection, port, memory } = workerData as {
+  connection: Connection;
+  port: MessagePort;
+  memory: SharedArrayBuffer;
+};
+const shared = new SharedState(memory);
 const session = randomUUID();
-const shell = new Router({ linger: 500 });
-const control = new Router({ linger: 500 });
-const stdin = new Router({ linger: 500 });
+// No high-water marks: past one, messages would be dropped unsaid. Cells that print are held back instead.
+const options = { linger: 500, sendHighWaterMark: 0, receiveHighWaterMark: 0 };
+const shell = new Router(options);
+const control = new Router(options);
+const stdin = new Router(options);
 const heartbeat = new Reply({ linger: 0 });
-const iopub = new Publisher({ linger: 500 });
+const iopub = new Publisher({ linger: 500, sendHighWaterMark: 0 });
 
 /** ZeroMQ sockets take one send at a time. */
 function inOrder(socket: {
@@ -36,9 +45,11 @@ const sendShell = inOrder(shell);
 const sendControl = inOrder(control);
 const sendStdin = inOrder(stdin);
 const sendIopub = inOrder(iopub);
-const publisher = new GatheringPublisher((message, topic) => {
-  void sendIopub(encode({ identities: [Buffer.from(topic)], message }, connection.key));
-}, session);
+const publisher = new GatheringPublisher(
+  (message, topic) => sendIopub(encode({ identities: [Buffer.from(topic)], message }, connection.key)),
+  session,
+  (length) => shared.sent(length),
+);
 
 let running: number | undefined;
 let asked: { readonly id: string; readonly reply: SharedArrayBuffer } | undefined;
@@ -119,7 +130,7 @@ async function serveStdin(): Promise<void> {
     const read = decode(frames, connection.key);
     if ("refused" in read) log(`message on stdin dropped: ${read.refused}`);
     else if (read.message.header.msg_type === "input_reply" && asked) {
-      answerAsk(asked.reply, String(read.message.content["value"] ?? ""), 1);
+      giveAnswer(asked.reply, String(read.message.content["value"] ?? ""));
       asked = undefined;
     }
   }
@@ -129,22 +140,12 @@ async function serveHeartbeat(): Promise<void> {
   for await (const frames of heartbeat) await heartbeat.send(frames);
 }
 
-/** Wakes the thread that waits in `ask`: 1 answered, 2 interrupted. */
-function answerAsk(buffer: SharedArrayBuffer, text: string, state: 1 | 2): void {
-  const flags = new Int32Array(buffer, 0, 2);
-  const room = new Uint8Array(buffer, 8);
-  const bytes = Buffer.from(text, "utf8").subarray(0, room.length);
-  room.set(bytes);
-  flags[1] = bytes.length;
-  Atomics.store(flags, 0, state);
-  Atomics.notify(flags, 0);
-}
-
 function interrupt(): void {
   if (asked) {
-    answerAsk(asked.reply, "", 2);
+    giveAnswer(asked.reply, undefined);
     asked = undefined;
   }
+  shared.stopRequested = true;
   interruptLadder({
     running: () => running,
     ask: () => tell({ type: "interrupt" }),

@@ -3,6 +3,7 @@ import { MessageChannel, receiveMessageOnPort, Worker } from "node:worker_thread
 import type { ToSession, ToSockets } from "./between.js";
 import { readConnection } from "./connection.js";
 import { Requests } from "./requests.js";
+import { SharedState, shareState } from "./shared.js";
 
 /**
  * Runs a kernel on the ports of a connection file until it is told to shut down. The sockets' thread starts first and
@@ -11,8 +12,9 @@ import { Requests } from "./requests.js";
 export async function startKernel(connectionFile: string): Promise<void> {
   const connection = readConnection(connectionFile);
   const { port1: port, port2: theirs } = new MessageChannel();
+  const memory = shareState();
   const worker = new Worker(new URL("./sockets-thread.js", import.meta.url), {
-    workerData: { connection, port: theirs },
+    workerData: { connection, port: theirs, memory },
     transferList: [theirs],
   });
   const tell = (message: ToSockets) => port.postMessage(message);
@@ -42,6 +44,7 @@ export async function startKernel(connectionFile: string): Promise<void> {
           take(next.message as ToSession);
         }
       },
+      new SharedState(memory),
     );
   } catch (error) {
     process.stderr.write(`lagbook kernel: the session could not start: ${(error as Error).stack}\n`);

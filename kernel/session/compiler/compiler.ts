@@ -1,7 +1,12 @@
 import { createRequire, SourceMap } from "node:module";
+import { adaptTypeScript, disk, lastMaps } from "./adapt.js";
+import { carry, globalBlocks } from "./carried.js";
 import type { CompletionInfo, Converter, Diagnostic } from "./converter.js";
-import { annotateAny, applyEdits, awaitsToYields, prepare, type Rewritten } from "./rewrite.js";
-import { adaptTypeScript, lastMaps, packageFolder, ts } from "./typescript.js";
+import { applyEdits, type Rewritten } from "./edits.js";
+import { plainOutput } from "./plain-output.js";
+import { annotateAny, prepare } from "./rewrite.js";
+import { inSteps } from "./steps.js";
+import { packageFolder, ts } from "./typescript.js";
 
 /** A problem that the type checker found in a cell. */
 export interface Problem {
@@ -20,7 +25,7 @@ export type Compiled =
   | {
       /** CommonJS body that reads `exports` and `require`; a generator's body when `style` is "generator". */
       readonly script: string;
-      readonly style: "plain" | "generator" | "async";
+      readonly style: "plain" | "generator";
       /** Property of `exports` that holds the last expression's value. */
       readonly lastValue: string | undefined;
       /** Declarations of all names so far, for the next cell. */
@@ -50,9 +55,10 @@ export function createCompiler(): Compiler {
   const require = createRequire(import.meta.url);
   const { createConverter } = require("tslab/dist/converter.js") as typeof import("tslab/dist/converter.js");
   const converter = createConverter() as unknown as Converter;
+  const globals = new Map<string, string>();
   return {
     converter,
-    compile: (declarations, source) => compile(converter, declarations, source),
+    compile: (declarations, source) => compile(converter, globals, declarations, source),
     complete(declarations, source, offset) {
       const cell = applyEdits(source, prepare(source));
       const found = converter.complete(declarations, cell.text, cell.rewritten(offset));
@@ -66,8 +72,29 @@ export function createCompiler(): Compiler {
   };
 }
 
-function compile(converter: Converter, declarations: string, source: string): Compiled {
-  const edits = prepare(source);
+/** Codes of "this module, or what is imported from it, is not there". */
+const absent = new Set([2305, 2306, 2307, 2614, 2724, 7016]);
+
+function compile(
+  converter: Converter,
+  globals: Map<string, string>,
+  declarations: string,
+  source: string,
+): Compiled {
+  disk.files.look();
+  const { edits: cuts, blocks, names } = globalBlocks(source);
+  if (blocks !== "") {
+    // A module beside the cell, so that what it adds to is not taken for names of earlier cells. It replaces one that
+    // declared the same names.
+    const module = globals.get(names) ?? `lagbook_globals_${globals.size}`;
+    globals.set(names, module);
+    const wrong = converter.addModule(module, blocks);
+    if (wrong.length > 0) {
+      converter.addModule(module, "");
+      return { problems: problemsOf(wrong.map(inCell), applyEdits(source, []), source) };
+    }
+  }
+  const edits = [...cuts, ...prepare(source)];
   let cell = applyEdits(source, edits);
   let converted = converter.convert(declarations, cell.text);
   const untypable = converted.diagnostics.filter(({ code }) => unwritable(code));
@@ -76,15 +103,16 @@ function compile(converter: Converter, declarations: string, source: string): Co
     cell = applyEdits(source, [...edits, ...annotateAny(source, offsets)]);
     converted = converter.convert(declarations, cell.text);
   }
+  // The module may be there when the cell is run again.
+  if (disk.resolution) disk.resolution.stale = converted.diagnostics.some(({ code }) => absent.has(code));
   if (converted.diagnostics.length > 0) return { problems: problemsOf(converted.diagnostics, cell, source) };
-  const script = converted.output ?? "";
-  const yields = converted.hasToplevelAwait ? awaitsToYields(script) : undefined;
+  const { script, style } = inSteps(plainOutput(converted.output ?? ""));
   const maps = lastMaps;
   return {
-    script: yields ?? script,
-    style: yields !== undefined ? "generator" : converted.hasToplevelAwait ? "async" : "plain",
+    script,
+    style,
     lastValue: converted.lastExpressionVar,
-    declarations: converted.declOutput ?? "",
+    declarations: carry(declarations, converted.declOutput ?? ""),
     sideOutputs: converted.sideOutputs ?? [],
     sourceLine: (line, character) => sourceLine(maps, line, character),
   };
@@ -120,6 +148,10 @@ function problemsOf(diagnostics: readonly Diagnostic[], cell: Rewritten, source:
     (problem, i) =>
       !problems.slice(0, i).some((other) => other.line === problem.line && other.message === problem.message),
   );
+}
+
+function inCell({ fileName: _, ...diagnostic }: Diagnostic): Diagnostic {
+  return diagnostic as Diagnostic;
 }
 
 function placeOf(source: string, offset: number): { line: number; character: number } {

@@ -1,53 +1,6 @@
 import type * as TypeScript from "@tslab/typescript-for-tslab";
+import type { Edit } from "./edits.js";
 import { ts } from "./typescript.js";
-
-/** A cell's source as it is compiled, and where each place in it came from. */
-export interface Rewritten {
-  readonly text: string;
-  /** Offset in the user's source of an offset in `text`. */
-  original(offset: number): number;
-  /** Offset in `text` of an offset in the user's source. */
-  rewritten(offset: number): number;
-}
-
-interface Edit {
-  readonly at: number;
-  readonly removed: number;
-  readonly added: string;
-}
-
-/** Applies edits (none overlapping) to a source. */
-export function applyEdits(source: string, edits: readonly Edit[]): Rewritten {
-  const sorted = [...edits].sort((a, b) => a.at - b.at);
-  let text = "";
-  let at = 0;
-  for (const edit of sorted) {
-    text += source.slice(at, edit.at) + edit.added;
-    at = edit.at + edit.removed;
-  }
-  text += source.slice(at);
-  return {
-    text,
-    original(offset) {
-      let shift = 0;
-      for (const edit of sorted) {
-        const start = edit.at + shift;
-        if (offset < start) break;
-        if (offset < start + edit.added.length) return edit.at;
-        shift += edit.added.length - edit.removed;
-      }
-      return offset - shift;
-    },
-    rewritten(offset) {
-      let shift = 0;
-      for (const edit of sorted) {
-        if (edit.at + edit.removed > offset) break;
-        shift += edit.added.length - edit.removed;
-      }
-      return offset + shift;
-    },
-  };
-}
 
 /**
  * Works around what the converter does not take: `export` before a declaration is blanked out (a cell's names are
@@ -101,27 +54,4 @@ export function annotateAny(source: string, offsets: readonly number[]): readonl
   };
   visit(file);
   return edits;
-}
-
-/**
- * Turns the awaits at the top level of a compiled cell into yields, so that each stretch between two of them can be
- * run, and interrupted, on its own. Undefined where a top-level `for await` leaves no way to do that.
- */
-export function awaitsToYields(js: string): string | undefined {
-  // Only in a module is a top-level `await (x)` an await and not the call of a function of that name.
-  const module = `${js}\nexport {};`;
-  const file = ts.createSourceFile("cell.js", module, ts.ScriptTarget.Latest, true, ts.ScriptKind.JS);
-  const edits: Edit[] = [];
-  let loop = false;
-  const visit = (node: TypeScript.Node): void => {
-    if (ts.isFunctionLike(node) || ts.isClassStaticBlockDeclaration(node)) return;
-    if (ts.isForOfStatement(node) && node.awaitModifier) loop = true;
-    if (ts.isAwaitExpression(node)) {
-      const start = node.getStart(file);
-      edits.push({ at: start, removed: 5, added: "(yield" }, { at: node.end, removed: 0, added: ")" });
-    }
-    ts.forEachChild(node, visit);
-  };
-  visit(file);
-  return loop ? undefined : applyEdits(js, edits).text;
 }

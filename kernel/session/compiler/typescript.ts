@@ -2,13 +2,13 @@ import { createRequire } from "node:module";
 import { dirname, join } from "node:path";
 import { fileURLToPath } from "node:url";
 import type * as TypeScript from "@tslab/typescript-for-tslab";
-import { pathsFor, typeRootsFor, withoutOnDemand } from "./node-types.js";
 
 const require = createRequire(import.meta.url);
-const path = require.resolve("@tslab/typescript-for-tslab");
+/** The compiler's main file. */
+export const compilerPath = require.resolve("@tslab/typescript-for-tslab");
 
 /** The TypeScript that cells are compiled with, as it comes. */
-export const ts = require(path) as typeof TypeScript;
+export const ts = require(compilerPath) as typeof TypeScript;
 
 /** Folder of the built package: the one with `package.json`. */
 export const packageFolder = findPackageFolder();
@@ -17,69 +17,4 @@ function findPackageFolder(): string {
   let folder = dirname(fileURLToPath(import.meta.url));
   while (!ts.sys.fileExists(join(folder, "package.json"))) folder = dirname(folder);
   return folder;
-}
-
-/** The source maps of the last cell that was turned into CommonJS: cell to module, module to CommonJS. */
-export let lastMaps: { readonly first: string | undefined; readonly second: string | undefined } = {
-  first: undefined,
-  second: undefined,
-};
-
-const mapComment = /\n\/\/# sourceMappingURL=data:application\/json;base64,([A-Za-z0-9+/=]+)\s*$/;
-
-function takeMap(js: string): { code: string; map: string | undefined } {
-  const found = mapComment.exec(js);
-  return found ? { code: js.slice(0, found.index + 1), map: found[1] } : { code: js, map: undefined };
-}
-
-/**
- * Puts an object in the place of the TypeScript module that the converter reads, with other compiler options: types of
- * ESM packages resolve, checks are strict, source maps are kept, `lagbook` is found from any folder, Node's larger modules
- * are read on demand, and no files are watched. The module's own files stay untouched.
- */
-export function adaptTypeScript(): void {
-  const overrides: Record<string, unknown> = {
-    createWatchCompilerHost(files: string[], options: TypeScript.CompilerOptions, ...rest: unknown[]) {
-      const adapted: TypeScript.CompilerOptions = {
-        ...options,
-        moduleResolution: ts.ModuleResolutionKind.Bundler,
-        strict: true,
-        // A notebook's callbacks are short; what they are given is known from the function they are handed to.
-        noImplicitAny: false,
-        inlineSourceMap: true,
-        baseUrl: packageFolder,
-        paths: {
-          ...pathsFor(process.cwd()),
-          lagbook: [join(packageFolder, "dist/src/index.d.ts")],
-          "lagbook/notebook": [join(packageFolder, "dist/kernel/session/notebook.d.ts")],
-        },
-        types: ["node"],
-        ...typeRootsFor(process.cwd()),
-      };
-      return (ts.createWatchCompilerHost as (...args: unknown[]) => unknown)(files, adapted, ...rest);
-    },
-    transpileModule(source: string, options: TypeScript.TranspileOptions) {
-      const { code, map } = takeMap(source);
-      const result = ts.transpileModule(code, {
-        ...options,
-        compilerOptions: { ...options.compilerOptions, inlineSourceMap: true },
-      });
-      const taken = takeMap(result.outputText);
-      lastMaps = { first: map, second: taken.map };
-      return { ...result, outputText: taken.code };
-    },
-    sys: Object.assign(Object.create(ts.sys), {
-      readFile: (path: string, encoding?: string) => withoutOnDemand(path, ts.sys.readFile(path, encoding)),
-      watchFile: () => ({ close() {} }),
-      watchDirectory: () => ({ close() {} }),
-    }),
-  };
-  const thin: Record<string, unknown> = {};
-  for (const key of Object.keys(ts)) {
-    Object.defineProperty(thin, key, {
-      enumerable: true,
-      get: () => overrides[key] ?? (ts as unknown as Record<string, unknown>)[key],
-    });
-  }
-  require.cache[path]!.exports = thin;
 }

@@ -1,6 +1,7 @@
 import assert from "node:assert/strict";
 import { test } from "node:test";
 import { type CellScript, thrownFailure, typeFailure } from "../../../kernel/session/failure.js";
+import { Interrupted } from "../../../kernel/session/interruption.js";
 
 test("a type error has its line and a caret as long as the place", () => {
   const problem = { message: "No.", line: 1, character: 4, length: 3 };
@@ -28,11 +29,12 @@ test("of a stack only the user's lines are told, each once", () => {
 
 test("what is thrown need not be an error, and an error may have a cause", () => {
   assert.equal(thrownFailure("just text", new Map()).evalue, "just text");
+  assert.equal(thrownFailure({ code: 7 }, new Map()).evalue, "{ code: 7 }");
   assert.equal(thrownFailure(undefined, new Map()).evalue, "undefined");
   const caused = new Error("outer", { cause: new TypeError("inner") });
   assert.deepEqual(thrownFailure(caused, new Map()).traceback, [
     "Error: outer",
     "  caused by TypeError: inner",
   ]);
-  assert.equal(thrownFailure(new Error("Interrupted asynchronously"), new Map()).ename, "Interrupted");
+  assert.equal(thrownFailure(new Interrupted(), new Map()).ename, "Interrupted");
 });

@@ -1,12 +1,8 @@
 import assert from "node:assert/strict";
 import { test } from "node:test";
 import fc from "fast-check";
-import {
-  annotateAny,
-  applyEdits,
-  awaitsToYields,
-  prepare,
-} from "../../../kernel/session/compiler/rewrite.js";
+import { applyEdits } from "../../../kernel/session/compiler/edits.js";
+import { annotateAny, prepare } from "../../../kernel/session/compiler/rewrite.js";
 
 const prepared = (source: string) => applyEdits(source, prepare(source)).text;
 
@@ -47,11 +43,4 @@ test("places are mapped there and back through any edits", () => {
     ),
     { seed: 3, numRuns: 200 },
   );
-});
-
-test("top-level awaits become yields with their precedence kept; those of functions stay", () => {
-  assert.equal(awaitsToYields("x = await a + 1"), "x = (yield a) + 1");
-  assert.equal(awaitsToYields("f(async () => await b)"), "f(async () => await b)");
-  assert.equal(awaitsToYields("await (await c)()"), "(yield ((yield c))())");
-  assert.equal(awaitsToYields("for await (const x of y) {}"), undefined);
 });

@@ -35,11 +35,19 @@ test("history by tail, range and search", () => {
   assert.deepEqual(history.answer({ hist_access_type: "tail", n: 1, output: true }), [
     [1, 4, ["a = 1", null]],
   ]);
+  history.addOutput("1");
+  assert.deepEqual(history.answer({ hist_access_type: "tail", n: 1, output: true }), [
+    [1, 4, ["a = 1", "1"]],
+  ]);
 });
 
 test("stream text is gathered per cell and never overtakes another message", async () => {
   const sent: Message[] = [];
-  const publisher = new GatheringPublisher((message) => sent.push(message), "s");
+  let credit = 0;
+  const send = async (message: Message) => void sent.push(message);
+  const publisher = new GatheringPublisher(send, "s", (length) => {
+    credit += length;
+  });
   const parent = { msg_id: "1" } as never;
   for (const text of ["a", "b"]) publisher.publish("stream", { name: "stdout", text }, parent);
   publisher.publish("stream", { name: "stderr", text: "c" }, parent);
@@ -55,6 +63,7 @@ test("stream text is gathered per cell and never overtakes another message", asy
       ["stream", "d"],
     ],
   );
+  assert.equal(credit, 4);
 });
 
 test("the ladder stops at the rung that bites", (context) => {

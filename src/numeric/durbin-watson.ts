@@ -1,3 +1,4 @@
+import { alongContour } from "./contour.js";
 import type { Matrix } from "./matrix.js";
 import { brentMinimum } from "./minimum.js";
 import { orthogonalLogDeterminant } from "./tridiagonal-determinant.js";
@@ -27,15 +28,17 @@ export function durbinWatsonTails(d: number, Q: Matrix, linked?: Uint8Array): Ra
   const side = traceOfProjected(Q, diagonal, links) > d * (T - Q.columns) ? -1 : 1;
   // On this side of zero I − 2z(A − dI) stays positive definite up to the limit, whatever the regressors.
   const limit = side < 0 ? 1 / (2 * d) : 1 / (2 * (4 - d));
-  const logMoment = (re: number, im: number) => orthogonalLogDeterminant(diagonal, links, d, re, im, Q);
+  const logMoment = (re: number, im: number): [number, number] => {
+    const [logSize, angle] = orthogonalLogDeterminant(diagonal, links, d, re, im, Q);
+    return [-logSize / 2, -angle / 2];
+  };
   const objective = (w: number) => {
     const z = side * limit * w;
-    const [value] = logMoment(z, 0);
-    return -value / 2 - Math.log(Math.abs(z));
+    return logMoment(z, 0)[0] - Math.log(Math.abs(z));
   };
   const { x } = brentMinimum(objective, 1e-9, 1 - 1e-9, 1e-4);
-  const centre = side * limit * x;
-  const tail = alongLine(centre, logMoment, curvatureScale(objective, x) * limit);
+  const contour = { centre: side * limit * x, scale: curvatureScale(objective, x) * limit, tilt: 0 };
+  const tail = Math.min(1, Math.abs(alongContour(logMoment, contour)));
   return side < 0 ? { lower: tail, upper: 1 - tail } : { lower: 1 - tail, upper: tail };
 }
 
@@ -72,38 +75,4 @@ function curvatureScale(objective: (w: number) => number, x: number): number {
   const step = 1e-3 * Math.min(x, 1 - x);
   const curvature = (objective(x + step) - 2 * objective(x) + objective(x - step)) / (step * step);
   return curvature > 0 ? 1 / Math.sqrt(curvature) : x;
-}
-
-/** ±(1/π) ∫ Re[exp(K(c + iy)) / (c + iy)] dy over y > 0, y = s sinh v, trapezoid halved until it stands still. */
-function alongLine(c: number, logMoment: (re: number, im: number) => [number, number], s: number): number {
-  const [base] = logMoment(c, 0);
-  const value = (v: number) => {
-    const y = s * Math.sinh(v);
-    const [re, im] = logMoment(c, y);
-    const size = Math.exp(-(re - base) / 2) * s * Math.cosh(v);
-    // Re[e^{iθ} / (c + iy)] with θ = −im/2.
-    const theta = -im / 2;
-    return { term: (size * (c * Math.cos(theta) + y * Math.sin(theta))) / (c * c + y * y), size };
-  };
-  const front = Math.exp(-base / 2) / Math.PI;
-  let step = 0.4;
-  let sum = value(0).term / 2;
-  let reach = 0;
-  for (let v = step; v < 60; v += step) {
-    const { term, size } = value(v);
-    sum += term;
-    reach = v;
-    if (size < 1e-17 * Math.abs(c)) break;
-  }
-  let estimate = sum * step;
-  for (let halving = 0; halving < 6; halving++) {
-    for (let v = step / 2; v < reach; v += step) sum += value(v).term;
-    step /= 2;
-    const next = sum * step;
-    const moved = Math.abs(next - estimate);
-    estimate = next;
-    // Each halving squares the relative error, so a move of 1e-7 leaves one of about 1e-14.
-    if (moved <= 1e-7 * Math.abs(next)) break;
-  }
-  return Math.min(1, Math.max(0, Math.sign(c) * front * estimate));
 }

@@ -1,5 +1,8 @@
 import type { Matrix } from "./matrix.js";
 
+/** Rows whose logarithms are added before they join the whole sum, which costs less to rounding. */
+const blockRows = 128;
+
 /**
  * log det B + log det(Q'B⁻¹Q) for B = I − 2z(A − dI), A symmetric tridiagonal with diagonal `diagonal` and
  * off-diagonal `links[t]` between rows t − 1 and t, z = re + i·im: the logarithm of the determinant of B restricted
@@ -24,6 +27,11 @@ export function orthogonalLogDeterminant(
   let pi = 0;
   let logSize = 0;
   let angle = 0;
+  let blockSize = 0;
+  let blockAngle = 0;
+  // The pivot of the row before less one, where this row and it share one logarithm.
+  let heldR = 0;
+  let heldI = 0;
   for (let t = 0; t < T; t++) {
     const level = 2 * (diagonal[t]! - d);
     const off = -2 * links[t]!;
@@ -35,11 +43,30 @@ export function orthogonalLogDeterminant(
       lr = (off * (re * pr + im * pi)) / size;
       li = (off * (im * pr - re * pi)) / size;
     }
-    pr = 1 - level * re - off * (lr * re - li * im);
+    // Pivots hardly differ from row to row, so neither do their rounding errors, and T of them would add up: what is
+    // rounded is the pivot less one.
+    const er = -level * re - off * (lr * re - li * im);
+    pr = 1 + er;
     pi = -level * im - off * (lr * im + li * re);
     const size = pr * pr + pi * pi;
-    logSize += Math.log(size);
-    if (im !== 0) angle += Math.atan2(pi, pr);
+    if (t % 2 === 0 && t !== T - 1) {
+      heldR = er;
+      heldI = pi;
+    } else {
+      // Both angles are within a right angle, so that of the product is the sum.
+      const productR = er + heldR + (er * heldR - pi * heldI);
+      const productI = pi + heldI + (er * heldI + pi * heldR);
+      blockSize += logOfSquare(productR, productI);
+      if (im !== 0) blockAngle += Math.atan2(productI, 1 + productR);
+      heldR = 0;
+      heldI = 0;
+      if (t % blockRows === blockRows - 1 || t === T - 1) {
+        logSize += blockSize;
+        angle += blockAngle;
+        blockSize = 0;
+        blockAngle = 0;
+      }
+    }
     const ir = pr / size;
     const ii = -pi / size;
     for (let j = 0; j < k; j++) {
@@ -57,6 +84,12 @@ export function orthogonalLogDeterminant(
   }
   const [small, smallAngle] = smallLogDeterminant(cr, ci, k);
   return [logSize / 2 + small, angle + smallAngle];
+}
+
+/** log |1 + a + bi|². */
+function logOfSquare(a: number, b: number): number {
+  const excess = 2 * a + a * a + b * b;
+  return Math.abs(excess) < 0.5 ? Math.log1p(excess) : Math.log((1 + a) * (1 + a) + b * b);
 }
 
 /** log det of a complex symmetric k×k matrix given by its upper triangle, by LDL' with principal logarithms. */

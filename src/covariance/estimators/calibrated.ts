@@ -4,6 +4,7 @@ import { InputError } from "../../numeric/index.js";
 import { kernels } from "../kernels.js";
 import { dependentLaw } from "../laws/dependent-law.js";
 import { type ErrorProcess, requireStationary } from "../laws/error-process.js";
+import { ownDesignLaw } from "../laws/fixed-b.js";
 import { dependentJointLaw } from "../laws/joint-dependent.js";
 import { caution, note, requireErrors } from "../remarks.js";
 import { fitAr1 } from "../rules/ar1-reml.js";
@@ -67,8 +68,9 @@ export function calibrated(options: CalibratedOptions = {}): CovarianceEstimator
         bandwidth: base.details["bandwidth"] as number,
         factor: base.details["factor"] as number,
       };
+      const name = `calibrated to ${process.label}`;
       return {
-        label: `${base.label}, calibrated to ${process.label}`,
+        label: `${base.label}, ${name}`,
         matrix: base.matrix,
         details: {
           ...base.details,
@@ -86,7 +88,10 @@ export function calibrated(options: CalibratedOptions = {}): CovarianceEstimator
             ...base.remarks,
           ];
         },
-        reference: (contrast) => dependentLaw(scores, contrast, choice, process),
+        reference: (contrast) =>
+          uncorrelated(process)
+            ? ownDesignLaw(scores, contrast, choice, name)
+            : dependentLaw(scores, contrast, choice, process),
         joint(restrictions) {
           base.joint(restrictions);
           return dependentJointLaw(scores, restrictions, choice, process);
@@ -95,6 +100,8 @@ export function calibrated(options: CalibratedOptions = {}): CovarianceEstimator
     },
   };
 }
+
+const uncorrelated = ({ ar, ma }: ErrorProcess): boolean => [...ar, ...ma].every((value) => value === 0);
 
 function knownProcess({ ar = [], ma = [] }: KnownErrors): ErrorProcess {
   if (![...ar, ...ma].every(Number.isFinite)) {

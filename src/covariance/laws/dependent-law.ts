@@ -19,7 +19,7 @@ function steps(design: ContrastDesign, bandwidth: number, { ar, ma }: ErrorProce
   const span = weights.length;
   if (span <= 100) return 64;
   const lasting = dotAt(weights, 1, weights, 0, span - 1) * (ar[0] ?? ma[0] ?? 0);
-  return Math.min(160, Math.ceil(((lasting < -0.03 ? 6 : 2.8) * span) / bandwidth));
+  return Math.min(160, Math.ceil(((lasting < -0.03 ? 6 : 2.4) * span) / bandwidth));
 }
 
 /**

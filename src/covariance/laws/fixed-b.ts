@@ -69,7 +69,12 @@ export function fixedBLaw(scores: Scores, contrast: Float64Array, choice: FixedB
  * Exact for iid normal errors and a bandwidth that was fixed beforehand, whatever the regressors: trends, steps
  * and random walks included.
  */
-function ownDesignLaw(scores: Scores, contrast: Float64Array, choice: FixedB, name: string): ReferenceLaw {
+export function ownDesignLaw(
+  scores: Scores,
+  contrast: Float64Array,
+  choice: FixedB,
+  name: string,
+): ReferenceLaw {
   const { kernel, bandwidth, factor } = choice;
   return formLaw(name, () => hacForm(designFor(scores, contrast), kernel, bandwidth), factor);
 }

@@ -38,7 +38,10 @@ export function resolver(form: Form): Resolver {
   let bundled: Spectrum | undefined;
   return (c, error) => {
     if (!process) {
-      const sums = form.local?.();
+      // With the least third moment there is any sense in, before the local one is worked out.
+      const { first, second } = form.sums;
+      const hopeful = bearsBundling({ first, second, third: (1.1 * second ** 2) / first }, c, error);
+      const sums = hopeful ? form.local?.() : undefined;
       if (sums && bearsBundling(sums, c, error)) {
         bundled ??= { leading: new Float64Array(), rest: bundles(sums) };
         return bundled;

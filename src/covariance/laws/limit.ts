@@ -62,7 +62,7 @@ function onGrids(kernel: Kernel, b: number): Limit {
 function gridForm(kernel: Kernel, b: number, points: number): Form {
   const constant = matrix(points, 1);
   columnOf(constant, 0).fill(1 / Math.sqrt(points));
-  return hacForm(designOf(constant.data, constant, points - 1), kernel, b * points);
+  return hacForm(designOf(constant.data, constant, points - 1), kernel, b * points, true);
 }
 
 /** Σλ = 1 − b∫κ and Σλ² = b∫κ², up to terms in b². */

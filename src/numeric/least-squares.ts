@@ -1,5 +1,8 @@
 import { singularValues } from "./eigen.js";
+import { InputError } from "./failure.js";
+import { gramInverse } from "./gram-inverse.js";
 import { columnOf, type Matrix, matrix } from "./matrix.js";
+import { dot } from "./products.js";
 import { checkRank } from "./rank.js";
 import { refine } from "./refinement.js";
 import { norm, solveUpper } from "./scaling.js";
@@ -11,7 +14,7 @@ export interface LeastSquares {
   readonly coefficients: Float64Array;
   /** y − Xβ̂, length T. */
   readonly residuals: Float64Array;
-  /** (X'X)⁻¹, k×k, from the triangle, never from X'X. */
+  /** (X'X)⁻¹, k×k: all digits up to a condition of 1e8, beyond it 32 less twice the digits of the condition. */
   readonly gramInverse: Matrix;
   /** Upper triangular R with R'R = X'X. */
   readonly R: Matrix;
@@ -23,56 +26,49 @@ export interface LeastSquares {
 
 /**
  * Least squares of y (length T) on the columns of X (T×k, T ≥ k): tall QR after power-of-two scaling of the
- * columns, then iterative refinement with residuals in doubled precision (after Björck 1967), which makes the coefficients right to about the last bit. Throws RankDeficient, naming the dependent columns.
+ * columns, then iterative refinement with residuals in doubled precision (after Björck 1967), which makes the coefficients right to about the last bit. Throws
+ * RankDeficient, naming the dependent columns, and InputError at a row that holds no finite number.
  */
 export function solveLeastSquares(X: Matrix, y: Float64Array): LeastSquares {
   const { rows: T, columns: k } = X;
-  const columns = Array.from({ length: k }, (_, j) => columnOf(X, j));
-  const { r: triangle, scales } = scaledTriangle([...columns, y]);
+  if (k === 0) throw new InputError("least squares: there is no column to fit the outcome on.");
+  if (y.length !== T) throw new InputError(`least squares: ${T} rows of terms, ${y.length} of the outcome.`);
+  const {
+    columns: [...columns],
+    before,
+    r: triangle,
+    scales,
+  } = scaledTriangle([...Array.from({ length: k }, (_, j) => columnOf(X, j)), y], (j) =>
+    j < k ? `column ${j + 1}` : "the outcome",
+  );
+  const outcome = columns.pop()!;
   const scaledR = matrix(k, k);
   for (let j = 0; j < k; j++) scaledR.data.set(triangle.data.subarray(j * (k + 1), j * (k + 1) + k), j * k);
-  checkRank(scaledR, T, scales);
+  const whole = scales.map((scale, j) => scale * before[j]!);
+  checkRank(scaledR, T, whole);
 
   const start = solveUpper(scaledR, triangle.data.subarray(k * (k + 1)), k);
   for (let j = 0; j < k; j++) start[j] = (start[j]! * scales[j]!) / scales[k]!;
   const scaledCondition = condition(scaledR);
-  const { coefficients, residuals } = refine(columns, y, scaledR, scales, start, scaledCondition);
+  const refined = refine(columns, outcome, scaledR, scales, start, scaledCondition);
+  const coefficients = refined.coefficients.map((value, j) => value * (before[j]! / before[k]!));
+  const residuals =
+    before[k] === 1 ? refined.residuals : refined.residuals.map((value) => value / before[k]!);
 
+  const inverse = gramInverse(columns, scaledR, scales, scaledCondition);
   const R = matrix(k, k);
-  for (let j = 0; j < k; j++)
-    for (let i = 0; i <= j; i++) R.data[j * k + i] = scaledR.data[j * k + i]! / scales[j]!;
-  let rss = 0;
-  for (let t = 0; t < T; t++) rss += residuals[t]! * residuals[t]!;
+  for (let j = 0; j < k; j++) {
+    for (let i = 0; i < k; i++) inverse.data[j * k + i]! *= whole[i]! * whole[j]!;
+    for (let i = 0; i <= j; i++) R.data[j * k + i] = scaledR.data[j * k + i]! / whole[j]!;
+  }
   return {
     coefficients,
     residuals,
-    gramInverse: gramInverse(scaledR, scales),
+    gramInverse: inverse,
     R,
-    rss,
+    rss: dot(residuals, residuals),
     condition: scaledCondition,
   };
-}
-
-function gramInverse(scaledR: Matrix, scales: Float64Array): Matrix {
-  const k = scaledR.columns;
-  const inverse = matrix(k, k);
-  const unit = new Float64Array(k);
-  for (let j = 0; j < k; j++) {
-    unit.fill(0);
-    unit[j] = 1;
-    inverse.data.set(solveUpper(scaledR, unit), j * k);
-  }
-  const result = matrix(k, k);
-  for (let i = 0; i < k; i++) {
-    for (let j = 0; j <= i; j++) {
-      let sum = 0;
-      for (let m = i; m < k; m++) sum += inverse.data[m * k + i]! * inverse.data[m * k + j]!;
-      const value = sum * scales[i]! * scales[j]!;
-      result.data[j * k + i] = value;
-      result.data[i * k + j] = value;
-    }
-  }
-  return result;
 }
 
 function condition(r: Matrix): number {

@@ -14,8 +14,7 @@ export function orthonormalBasis(X: Matrix): Matrix {
 
 function divideByTriangle(X: Matrix): Matrix {
   const { rows: T, columns: k } = X;
-  const columns = Array.from({ length: k }, (_, j) => columnOf(X, j));
-  const { r, scales } = scaledTriangle(columns);
+  const { r, scales, columns } = scaledTriangle(Array.from({ length: k }, (_, j) => columnOf(X, j)));
   const result = matrix(T, k);
   for (let j = 0; j < k; j++) {
     const target = columnOf(result, j);

@@ -67,9 +67,9 @@ export function transposeTimesVector(a: Matrix, x: ArrayLike<number>): Float64Ar
   return Float64Array.from({ length: a.columns }, (_, j) => dot(columnOf(a, j), x));
 }
 
-/** A S A for symmetric A and S of one size: the sandwich of a covariance estimator, symmetric to the bit. */
+/** A S A' for a symmetric S with as many rows as A has columns, symmetric to the bit: A may be a bread or restrictions. */
 export function symmetricProduct(a: Matrix, s: Matrix): Matrix {
-  const result = multiply(multiply(a, s), a);
+  const result = multiply(multiply(a, s), transpose(a));
   for (let i = 0; i < a.rows; i++) {
     for (let j = 0; j < i; j++) {
       const mean = (result.data[i * a.rows + j]! + result.data[j * a.rows + i]!) / 2;

@@ -102,11 +102,11 @@ function residualsAndGradient(
     residuals.set(numbers.subarray(high, high + rows), start);
     rest.set(numbers.subarray(low, low + rows), start);
   }
-  return Float64Array.from({ length: k }, (_, j) => joined(numbers, sums + 8 * j));
+  return Float64Array.from({ length: k }, (_, j) => joined(numbers, sums + 8 * j).sum);
 }
 
-/** Four sums and their tails as one number, the sums added without loss. */
-function joined(numbers: Float64Array, at: number): number {
+/** The four sums and tails of the gradient kernel as one number and what it lacks; the sums are added without loss. */
+export function joined(numbers: Float64Array, at: number): { sum: number; tail: number } {
   let sum = 0;
   let tail = 0;
   for (const i of [0, 2, 1, 3]) {
@@ -116,7 +116,8 @@ function joined(numbers: Float64Array, at: number): number {
     tail += sum - (next - part) + (value - part) + numbers[at + 4 + i]!;
     sum = next;
   }
-  return sum + tail;
+  const whole = sum + tail;
+  return { sum: whole, tail: tail - (whole - sum) };
 }
 
 /** Takes Xδ off the residuals, a small change δ of the coefficients having been made. */
@@ -142,7 +143,7 @@ function correct(
 }
 
 /** Copies rows of each column to the kernels' memory, with zeros up to a whole number of fours. */
-function copyBlock(
+export function copyBlock(
   columns: readonly Float64Array[],
   start: number,
   rows: number,

@@ -13,9 +13,12 @@ export function norm(x: ArrayLike<number>): number {
   return largest * Math.sqrt(sum);
 }
 
-/** The power of two that brings `size` into [1, 2): multiplying by it loses no digit. One for zero. */
+/**
+ * The power of two that brings `size` into [1, 2), or as near as one in the range of numbers can: multiplying by it loses no
+ * digit. One for zero.
+ */
 export function powerOfTwo(size: number): number {
-  return size > 0 && Number.isFinite(size) ? 2 ** -Math.floor(Math.log2(size)) : 1;
+  return size > 0 && Number.isFinite(size) ? 2 ** Math.min(1023, -Math.floor(Math.log2(size))) : 1;
 }
 
 /** Solves R'z = b for an upper triangular R (leading n×n part). */

@@ -1,3 +1,4 @@
+import { InputError } from "./failure.js";
 import { columnOf, type Matrix, matrix } from "./matrix.js";
 import { norm, powerOfTwo } from "./scaling.js";
 import { padded, workspace } from "./wasm.js";
@@ -34,8 +35,12 @@ export function tallR(columns: readonly Float64Array[]): Matrix {
   return r;
 }
 
-/** The triangle of columns that were multiplied by `scales`, powers of two which bring their lengths into [1, 2). */
+/** The triangle of columns brought to lengths in [1, 2) by powers of two, which cost no digit. */
 export interface ScaledTriangle {
+  /** The given columns; copies times `before` where their squares would have left the range of numbers. */
+  readonly columns: readonly Float64Array[];
+  readonly before: Float64Array;
+  /** R of `columns` times `scales`. */
   readonly r: Matrix;
   readonly scales: Float64Array;
 }
@@ -45,21 +50,40 @@ const safe = 1e100;
 
 /**
  * R of the columns at lengths near one. A power of two commutes with every step of the elimination, so the columns are
- * scaled afterwards, and before it only where squares could leave the range of numbers.
+ * scaled afterwards, and before it only where squares could leave the range of numbers. Throws InputError at an entry
+ * that is not a finite number; `name` says what a column is called.
  */
-export function scaledTriangle(columns: readonly Float64Array[]): ScaledTriangle {
-  const r = tallR(columns);
-  const lengths = columns.map((_, j) => norm(columnOf(r, j)));
-  if (!lengths.every((length) => length > 1 / safe && length < safe)) return scaledBefore(columns);
-  const scales = Float64Array.from(lengths, powerOfTwo);
+export function scaledTriangle(
+  given: readonly Float64Array[],
+  name = (j: number) => `column ${j + 1}`,
+): ScaledTriangle {
+  let columns = given;
+  let before = new Float64Array(given.length).fill(1);
+  let r = tallR(columns);
+  const inRange = (j: number) => {
+    const length = norm(columnOf(r, j));
+    return length > 1 / safe && length < safe;
+  };
+  if (!columns.every((_, j) => inRange(j))) {
+    before = Float64Array.from(given, (column, j) => powerOfTwo(largest(column, name(j))));
+    columns = given.map((column, j) => column.map((value) => value * before[j]!));
+    r = tallR(columns);
+  }
+  const scales = Float64Array.from(columns, (_, j) => powerOfTwo(norm(columnOf(r, j))));
   for (let j = 0; j < r.columns; j++) {
     for (let i = 0; i <= j; i++) r.data[j * r.rows + i]! *= scales[j]!;
   }
-  return { r, scales };
+  return { columns, before, r, scales };
 }
 
-function scaledBefore(columns: readonly Float64Array[]): ScaledTriangle {
-  const scales = Float64Array.from(columns, (column) => powerOfTwo(norm(column)));
-  const r = tallR(columns.map((column, j) => column.map((value) => value * scales[j]!)));
-  return { r, scales };
+/** The largest size in a column. */
+function largest(column: Float64Array, name: string): number {
+  let size = 0;
+  for (let t = 0; t < column.length; t++) {
+    const value = Math.abs(column[t]!);
+    if (!Number.isFinite(value))
+      throw new InputError(`Row ${t + 1} of ${name} is ${column[t]}; only finite numbers can be fitted.`);
+    if (value > size) size = value;
+  }
+  return size;
 }

@@ -96,3 +96,46 @@ test("an orthonormal basis is one, also for nearly dependent columns", () => {
   const gram = crossproduct(Q).data;
   for (let i = 0; i < 9; i++) assert.ok(Math.abs(gram[i]! - (i % 4 === 0 ? 1 : 0)) < 1e-13);
 });
+
+test("sizes at either end of the range of numbers: coefficients and residuals as at ordinary size", () => {
+  const columns = gaussian(50, 2, 6);
+  const y = counterRandom(6, 99).fillNormal(new Float64Array(50));
+  const ordinary = solveLeastSquares(fromColumns(columns), y);
+  for (const [a, b] of [
+    [1000, 1000],
+    [1017, 0],
+    [-1000, 0],
+    [0, 1015],
+    [0, -900],
+    [-700, 300],
+  ] as const) {
+    const [first, second] = columns as [Float64Array, Float64Array];
+    const X = fromColumns([first.map((value) => value * 2 ** a), second]);
+    const found = solveLeastSquares(
+      X,
+      y.map((value) => value * 2 ** b),
+    );
+    agree(
+      [found.coefficients[0]! * 2 ** (a / 2) * 2 ** (a / 2 - b), found.coefficients[1]! * 2 ** -b],
+      ordinary.coefficients,
+      15,
+      `2^${a}, 2^${b}`,
+    );
+    agree(
+      found.residuals.map((value) => value * 2 ** -b),
+      ordinary.residuals,
+      12,
+      `residuals at 2^${a}, 2^${b}`,
+    );
+  }
+});
+
+test("a value that is no finite number is named by row and column", () => {
+  const [a, b] = gaussian(20, 2, 7) as [Float64Array, Float64Array];
+  const spoilt = a.map((value, t) => (t === 4 ? Number.NaN : value));
+  assert.throws(() => solveLeastSquares(fromColumns([b, spoilt]), a), /Row 5 of column 2 is NaN/);
+  assert.throws(() => solveLeastSquares(fromColumns([b]), spoilt), /Row 5 of the outcome is NaN/);
+  assert.throws(() => orthonormalBasis(fromColumns([spoilt])), /Row 5 of column 1 is NaN/);
+  assert.throws(() => solveLeastSquares(fromColumns([]), new Float64Array(0)), /no column/);
+  assert.throws(() => solveLeastSquares(fromColumns([a]), b.subarray(1)), /20 rows of terms, 19/);
+});

@@ -1,6 +1,7 @@
 import type { Regression } from "../estimate/index.js";
 import { columnOf, InputError, type Matrix, matrix } from "../numeric/index.js";
 import { inverse } from "./shape/inverse.js";
+import { dotAt } from "./shape/vectors.js";
 
 /**
  * The scores x_t û_t of a regression in coordinates that no scaling of X can spoil. With X = QR the coefficients'
@@ -57,16 +58,10 @@ function form(regression: Regression): Scores {
 
 /** Q'X. */
 function products(Q: Matrix, X: Matrix): Matrix {
-  const k = X.columns;
+  const { rows: n, columns: k } = X;
   const result = matrix(k, k);
   for (let j = 0; j < k; j++) {
-    const x = columnOf(X, j);
-    for (let i = 0; i < k; i++) {
-      const q = columnOf(Q, i);
-      let sum = 0;
-      for (let t = 0; t < x.length; t++) sum += q[t]! * x[t]!;
-      result.data[j * k + i] = sum;
-    }
+    for (let i = 0; i < k; i++) result.data[j * k + i] = dotAt(Q.data, i * n, X.data, j * n, n);
   }
   return result;
 }

@@ -28,7 +28,7 @@ export function defaultComparison(T: number): CovarianceEstimator[] {
     hac({ kernel: "bartlett", bandwidth: "newey-west" }),
     hac({ kernel: "parzen", bandwidth: "andrews" }),
     hac({ kernel: "quadratic spectral", bandwidth: "andrews" }),
-    hac({ kernel: "quadratic spectral", bandwidth: "andrews", prewhiten: true }),
+    hac({ kernel: "parzen", bandwidth: "andrews", prewhiten: true }),
     cosine(),
     batches(),
     T <= CALIBRATED_UP_TO ? calibrated() : hac({ kernel: "bartlett", bandwidth: "cube-root" }),

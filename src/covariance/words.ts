@@ -13,7 +13,7 @@ export function figure(x: number): string {
   return x.toFixed(Math.max(0, 2 - Math.floor(Math.log10(size)))).replace("-", "−");
 }
 
-/** `95 %`, `99.9 %`. */
+/** `95%`, `99.9%`. */
 export function percent(level: number): string {
-  return `${Number((100 * level).toPrecision(6))} %`;
+  return `${Number((100 * level).toPrecision(6))}%`;
 }

@@ -81,7 +81,7 @@ test("conclusions: under all, under some, under none, in the finding", () => {
   const fare = c.coefficient("fare");
   assert.equal(fare.holds, "all");
   assert.equal(fare.apart, fare.judged);
-  assert.match(c.finding, /^At 95 % fare differs from zero under all 12 estimators; rain /);
+  assert.match(c.finding, /^At 95% fare differs from zero under all 12 estimators; rain /);
   assert.match(
     c.finding,
     /The width changes most for (fare|rain): \d\.\d\d times the classical one under .+\.$/,

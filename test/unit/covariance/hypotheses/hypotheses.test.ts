@@ -77,7 +77,7 @@ test("restrictions that equal a number, and the true ones are not rejected", () 
   ]);
   assert.ok(exact.wald < 1e-20);
   assert.ok(exact.p > 0.999);
-  assert.match(exact.finding, /not rejected at 95 %/);
+  assert.match(exact.finding, /not rejected at 95%/);
   assert.match(exact.restrictions[1]!, /^x2 − x3 = /);
 });
 
@@ -92,14 +92,14 @@ test("findings say what was found of these terms", () => {
   );
   assert.match(
     jointly(m, ["fare", "rain"]).finding,
-    /^Together fare and rain differ from zero at 95 % \(p < 0\.001\)\.$/,
+    /^Together fare and rain differ from zero at 95% \(p < 0\.001\)\.$/,
   );
-  assert.match(jointly(m, ["rain"]).finding, /^rain cannot be told from zero at 95 % \(p = 0\.\d{3}\)\.$/);
+  assert.match(jointly(m, ["rain"]).finding, /^rain cannot be told from zero at 95% \(p = 0\.\d{3}\)\.$/);
   const sum = combine(m, { fare: 1, rain: 2 });
   assert.equal(sum.label, "fare + 2 × rain");
   assert.match(
     sum.finding,
-    /^fare \+ 2 × rain is [\d.−]+, with 95 % interval [\d.−]+ to [\d.−]+: it differs from zero/,
+    /^fare \+ 2 × rain is [\d.−]+, with 95% interval [\d.−]+ to [\d.−]+: it differs from zero/,
   );
 });
 

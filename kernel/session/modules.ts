@@ -1,10 +1,7 @@
 import { createRequire } from "node:module";
 import { dirname, join } from "node:path";
 import { constants, Script } from "node:vm";
-import * as lagbook from "../../src/index.js";
-import * as notebook from "./notebook.js";
-
-const ours: Readonly<Record<string, unknown>> = { lagbook, "lagbook/notebook": notebook };
+import { ownModules as ours } from "./given.js";
 
 /** Codes of "`require` cannot load this, but a real import may". */
 const importable = new Set([
@@ -119,12 +116,3 @@ function importFrom(file: string): (specifier: string) => Promise<unknown> {
     }
   };
 }
-
-/** Names that cells have without importing them, by the module that they come from. */
-export const cellNames: readonly { module: string; names: readonly string[] }[] = [
-  { module: "lagbook", names: Object.keys(lagbook) },
-  {
-    module: "lagbook/notebook",
-    names: ["ask", "clearOutput", "display"] satisfies (keyof typeof notebook)[],
-  },
-];

@@ -3,18 +3,12 @@
  * objects, since code of cells reads and writes them in its loops.
  */
 export class Scope {
-  readonly #given: Record<string, unknown> = Object.create(null);
-  readonly #own: Record<string, unknown> = Object.create(this.#given);
-  #opened = false;
+  /** Where cells set and find their names. */
+  readonly names: Record<string, unknown>;
 
-  /** Where a cell's names are set. */
-  get names(): Record<string, unknown> {
-    return this.#opened ? this.#own : this.#given;
-  }
-
-  /** What is named from now on is the user's. */
-  open(): void {
-    this.#opened = true;
+  /** @param given what cells have without an import */
+  constructor(given: Readonly<Record<string, unknown>>) {
+    this.names = Object.create(Object.assign(Object.create(null), given));
   }
 
   /** The value of a name that only the compiler uses, which is then forgotten. */

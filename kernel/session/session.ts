@@ -4,12 +4,13 @@ import { type Compiled, type Compiler, createCompiler, importsOf } from "./compi
 import { type Completions, complete } from "./complete.js";
 import { CellExecutor } from "./executor.js";
 import { type CellFailure, type CellScript, thrownFailure, typeFailure } from "./failure.js";
+import { givenDeclarations, givenNames } from "./given.js";
 import { guardErrors } from "./guard-errors.js";
 import { guardExit } from "./guard-exit.js";
 import { type Inspection, inspectAt } from "./inspect.js";
 import { Interrupted, Interruption } from "./interruption.js";
 import { type Completeness, isComplete } from "./is-complete.js";
-import { CellModules, cellNames } from "./modules.js";
+import { CellModules } from "./modules.js";
 import { Shown } from "./notebook.js";
 import type { Bundle, Output } from "./output.js";
 import { showProgress } from "./progress.js";
@@ -56,6 +57,10 @@ export interface ExecuteReply {
 /** One user's session: cells compiled and run in order, their names shared. */
 export interface Session {
   execute(code: string, options?: ExecuteOptions): Promise<ExecuteReply>;
+  /** Does what the first cell would have to, so that it need not. */
+  warm(): void;
+  /** Makes the next session of the installation start quicker; for when nobody waits. */
+  keep(): void;
   /** Completions at an offset in UTF-16 units. */
   complete(code: string, offset: number): Completions;
   inspect(code: string, offset: number, detail?: number): Inspection;
@@ -75,8 +80,8 @@ export async function createSession(options: SessionOptions): Promise<Session> {
   guardExit();
   // Deep enough that the user's own line is still among the frames when a cell function throws.
   Error.stackTraceLimit = Math.max(Error.stackTraceLimit, 60);
-  const session = new OpenSession(options, createCompiler(), before);
-  await session.prime();
+  const session = new OpenSession(options, createCompiler(givenDeclarations), before);
+  showProgress();
   return session;
 }
 
@@ -87,12 +92,12 @@ class OpenSession implements Session {
   readonly #compiler: Compiler;
   readonly #modules: CellModules;
   readonly #executor: CellExecutor;
-  readonly #scope = new Scope();
+  readonly #scope = new Scope(givenNames);
   readonly #scripts = new Map<string, CellScript>();
   readonly #shown = new Set<string>();
   readonly #before: string;
   readonly #unguard: () => void;
-  #declarations = "";
+  #declarations = givenDeclarations;
   #count = 0;
   #displays = 0;
   #runs = 0;
@@ -110,22 +115,6 @@ class OpenSession implements Session {
 
   get values(): Readonly<Record<string, unknown>> {
     return this.#scope.names;
-  }
-
-  /** Runs the hidden first cell that brings the cell functions into scope. */
-  async prime(): Promise<void> {
-    const imports = cellNames.map(
-      ({ module, names }) => `import { ${names.join(", ")} } from ${JSON.stringify(module)};`,
-    );
-    const reply = await this.execute(imports.join("\n"), {
-      silent: true,
-      storeHistory: false,
-      emit: () => {},
-    });
-    if (reply.status === "error") throw new Error(`the cell functions cannot be loaded: ${reply.evalue}`);
-    this.#scope.open();
-    this.#last = undefined;
-    showProgress();
   }
 
   async execute(code: string, options: ExecuteOptions = {}): Promise<ExecuteReply> {
@@ -152,6 +141,14 @@ class OpenSession implements Session {
     }
     const expressions = await this.#evaluate(options.userExpressions ?? {}, context);
     return { status: "ok", execution_count: count, user_expressions: expressions };
+  }
+
+  warm(): void {
+    this.#compiler.compile(this.#declarations, "0");
+  }
+
+  keep(): void {
+    this.#compiler.keep();
   }
 
   complete(code: string, offset: number): Completions {

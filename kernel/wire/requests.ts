@@ -8,6 +8,7 @@ import type { SharedState } from "./shared.js";
 
 type Request = Extract<ToSession, { type: "request" }>;
 type Content = Readonly<Record<string, unknown>>;
+const quietMilliseconds = 3000;
 
 /** Answers the requests of the shell channel one after another. */
 export class Requests {
@@ -45,6 +46,16 @@ export class Requests {
 
   interrupt(): void {
     this.#session.interrupt();
+  }
+
+  /** Readies the session for its first cell, if nobody is waiting yet, and in a quiet moment the next session's start. */
+  warm(): void {
+    if (!this.#busy) this.#session.warm();
+    const quiet = setInterval(() => {
+      if (this.#busy) return;
+      clearInterval(quiet);
+      this.#session.keep();
+    }, quietMilliseconds).unref();
   }
 
   add(request: Request): void {

@@ -1,9 +1,13 @@
+import { createRequire } from "node:module";
 import { dirname } from "node:path";
 import { MessageChannel, receiveMessageOnPort, Worker } from "node:worker_threads";
+import type { SessionOptions } from "../session/index.js";
 import type { ToSession, ToSockets } from "./between.js";
 import { readConnection } from "./connection.js";
 import { Requests } from "./requests.js";
 import { SharedState, shareState } from "./shared.js";
+
+const require = createRequire(import.meta.url);
 
 /**
  * Runs a kernel on the ports of a connection file until it is told to shut down. The sockets' thread starts first and
@@ -33,25 +37,25 @@ export async function startKernel(connectionFile: string): Promise<void> {
   });
   // Without a listener the interrupt signal would end the process between cells.
   process.on("SIGINT", () => requests?.interrupt());
+  const drain = () => {
+    for (let next = receiveMessageOnPort(port); next; next = receiveMessageOnPort(port)) {
+      take(next.message as ToSession);
+    }
+  };
   try {
-    const { createSession } = await import("../session/index.js");
-    requests = await Requests.open(
-      tell,
-      (options) => createSession({ directory: notebookFolder(), ...options }),
-      () => {
-        // What has arrived by now, so that a failing cell aborts just the requests that were already waiting.
-        for (let next = receiveMessageOnPort(port); next; next = receiveMessageOnPort(port)) {
-          take(next.message as ToSession);
-        }
-      },
-      new SharedState(memory),
-    );
+    // Loading the session's few hundred modules one after the other takes less time than through promises.
+    const { createSession } = require("../session/index.js") as typeof import("../session/index.js");
+    const open = (options: Omit<SessionOptions, "directory">) =>
+      createSession({ directory: notebookFolder(), ...options });
+    requests = await Requests.open(tell, open, drain, new SharedState(memory));
   } catch (error) {
     process.stderr.write(`lagbook kernel: the session could not start: ${(error as Error).stack}\n`);
     tell({ type: "failed" });
     return;
   }
   for (const message of waiting) take(message);
+  drain();
+  requests.warm();
 }
 
 /** Jupyter starts kernels in the notebook's folder. */

@@ -1,6 +1,7 @@
 import { createRequire } from "node:module";
-import { join } from "node:path";
+import { basename, join } from "node:path";
 import type * as TypeScript from "@tslab/typescript-for-tslab";
+import { createBuilder } from "./builder.js";
 import { shareVariables } from "./live-names.js";
 import { LocalFiles } from "./local-files.js";
 import { pathsFor, typeRootsFor, withoutOnDemand } from "./node-types.js";
@@ -30,10 +31,18 @@ export const disk: { files: LocalFiles; resolution: Resolution | undefined } = {
  * Puts an object in the place of the TypeScript module that the converter reads, with other compiler options: types of
  * ESM packages resolve, checks are strict, source maps are kept, `lagbook` is found from any folder, Node's larger modules
  * are read on demand, and local files are looked at instead of watched. The module's own files stay untouched.
+ *
+ * @param declarations what is declared before the first cell
  */
-export function adaptTypeScript(): void {
+export function adaptTypeScript(declarations: string): void {
   const overrides: Record<string, unknown> = {
-    createWatchCompilerHost(files: string[], options: TypeScript.CompilerOptions, ...rest: unknown[]) {
+    createWatchCompilerHost(
+      files: string[],
+      options: TypeScript.CompilerOptions,
+      system: TypeScript.System,
+      _createProgram: unknown,
+      ...rest: unknown[]
+    ) {
       const adapted: TypeScript.CompilerOptions = {
         ...options,
         moduleResolution: ts.ModuleResolutionKind.Bundler,
@@ -50,9 +59,11 @@ export function adaptTypeScript(): void {
         types: ["node"],
         ...typeRootsFor(process.cwd()),
       };
-      const host = (ts.createWatchCompilerHost as (...args: unknown[]) => TypeScript.ModuleResolutionHost)(
+      const host = (ts.createWatchCompilerHost as (...given: unknown[]) => TypeScript.ModuleResolutionHost)(
         files,
         adapted,
+        withFirst(system, declarations),
+        createBuilder,
         ...rest,
       );
       disk.files = new LocalFiles();
@@ -84,4 +95,20 @@ export function adaptTypeScript(): void {
     });
   }
   createRequire(import.meta.url).cache[compilerPath]!.exports = thin;
+}
+
+/**
+ * The system, with declarations in the file of earlier cells when it is read for the first time: the converter makes a
+ * program before it is given any, and would have to make it anew.
+ */
+function withFirst(system: TypeScript.System, declarations: string): TypeScript.System {
+  let first = true;
+  return Object.assign(Object.create(system), {
+    readFile(path: string, encoding?: string) {
+      const text = system.readFile(path, encoding);
+      if (!first || basename(path) !== "__prev__.d.ts") return text;
+      first = false;
+      return text + declarations;
+    },
+  });
 }

@@ -6,7 +6,7 @@ import { applyEdits, type Rewritten } from "./edits.js";
 import { plainOutput } from "./plain-output.js";
 import { annotateAny, prepare } from "./rewrite.js";
 import { inSteps } from "./steps.js";
-import { packageFolder, ts } from "./typescript.js";
+import { keepCompiled, ts } from "./typescript.js";
 
 /** A problem that the type checker found in a cell. */
 export interface Problem {
@@ -43,15 +43,21 @@ export interface Compiler {
   compile(declarations: string, source: string): Compiled;
   complete(declarations: string, source: string, offset: number): CompletionInfo;
   inspect(declarations: string, source: string, offset: number): ReturnType<Converter["inspect"]>;
+  /** Makes the next compiler start quicker; takes a moment. */
+  keep(): void;
   close(): void;
 }
 
 /** Codes of "the type of this name cannot be written down": a declaration file's trouble, not the user's. */
 const unwritable = (code: number) => code === 2742 || code === 7056 || (code >= 4020 && code <= 4118);
 
-/** A compiler for one session, with the notebook's folder as the present one. Takes about a second. */
-export function createCompiler(): Compiler {
-  adaptTypeScript();
+/**
+ * A compiler for one session, with the notebook's folder as the present one. Takes the better part of a second.
+ *
+ * @param declarations what is declared before the first cell, and given to `compile` with it
+ */
+export function createCompiler(declarations = ""): Compiler {
+  adaptTypeScript(declarations);
   const require = createRequire(import.meta.url);
   const { createConverter } = require("tslab/dist/converter.js") as typeof import("tslab/dist/converter.js");
   const converter = createConverter() as unknown as Converter;
@@ -68,6 +74,7 @@ export function createCompiler(): Compiler {
       const cell = applyEdits(source, prepare(source));
       return converter.inspect(declarations, cell.text, cell.rewritten(offset));
     },
+    keep: keepCompiled,
     close: () => converter.close(),
   };
 }
@@ -164,5 +171,3 @@ function placeOf(source: string, offset: number): { line: number; character: num
 export function importsOf(source: string): string[] {
   return ts.preProcessFile(source, true, true).importedFiles.map(({ fileName }) => fileName);
 }
-
-export { packageFolder };

@@ -1,4 +1,5 @@
 import { randomUUID } from "node:crypto";
+import { writeSync } from "node:fs";
 import { type MessagePort, workerData } from "node:worker_threads";
 import { Publisher, Reply, Router } from "zeromq";
 import { giveAnswer } from "./answer.js";
@@ -56,7 +57,10 @@ let asked: { readonly id: string; readonly reply: SharedArrayBuffer } | undefine
 let closing = false;
 
 function log(text: string): void {
-  process.stderr.write(`lagbook kernel: ${text}\n`);
+  // Not by this thread's own stream, which waits for the other thread to have a moment.
+  try {
+    writeSync(2, `lagbook kernel: ${text}\n`);
+  } catch {} // nobody listens any more
 }
 
 function tell(message: ToSession): void {

@@ -7,12 +7,21 @@ interface Target {
   readonly resolvedFileName: string;
 }
 
+type Bind = (file: TypeScript.SourceFile, options: TypeScript.CompilerOptions) => void;
+
 /**
  * Makes the compiler's programs. The usual builder asks a type checker, at every program, which files each file of the
  * program refers to; cells need only the local files behind the cell itself.
  */
 export function createBuilder(...given: Parameters<TypeScript.CreateProgram<Builder>>): Builder {
   const builder = (ts.createAbstractBuilder as (...given: unknown[]) => Builder)(...given);
+  const program = builder.getProgram();
+  // The converter looks at the names of the cell without asking for a checker, which would find them.
+  const { bindSourceFile } = ts as unknown as { bindSourceFile: Bind };
+  for (const name of program.getRootFileNames()) {
+    const file = program.getSourceFile(name);
+    if (file) bindSourceFile(file, program.getCompilerOptions());
+  }
   return Object.assign(builder, {
     getAllDependencies: (file: TypeScript.SourceFile) => sourcesBehind(builder.getProgram(), file),
   });

@@ -41,6 +41,22 @@ interface Kernels {
       work: number,
     ]
   ): void;
+  fourier(
+    ...args: [
+      re: number,
+      im: number,
+      outRe: number,
+      outIm: number,
+      n1: number,
+      n2: number,
+      factors1: number,
+      factors2: number,
+      coarse: number,
+      fine: number,
+      shift: number,
+      work: number,
+    ]
+  ): void;
   filter(
     ...args: [
       x: number,
@@ -55,7 +71,7 @@ interface Kernels {
   ): void;
 }
 
-/** Stretches of the kernels' memory for one call. Nothing is kept there between calls. */
+/** Stretches of the kernels' memory for one call. Nothing in them lasts beyond it. */
 export interface Workspace {
   readonly kernels: Kernels;
   /** All of the memory. */
@@ -68,31 +84,54 @@ const pageBytes = 65_536;
 /** The first numbers are left alone: pointer zero is nobody's. */
 const firstNumber = 16;
 
-let loaded: Kernels | undefined;
+/** More memory than this is not kept for the next call. */
+const keptBytes = 2 ** 28;
 
-/** Stretches of the given lengths, zeroed. The memory grows to the most that was ever asked for and is used again. */
+let kernelModule: WebAssembly.Module | undefined;
+let lasting: Kernels | undefined;
+
+/** Stretches of the given lengths, zeroed. */
 export function workspace(...lengths: number[]): Workspace {
-  loaded ??= load();
+  const space = roughWorkspace(...lengths);
+  space.numbers.fill(0, firstNumber, firstNumber + total(lengths));
+  return space;
+}
+
+/** Stretches of the given lengths, with whatever was there before. */
+export function roughWorkspace(...lengths: number[]): Workspace {
+  const bytes = 8 * (firstNumber + total(lengths));
+  const kernels = bytes > keptBytes ? instance() : theLasting();
+  const short = bytes - kernels.memory.buffer.byteLength;
+  if (short > 0) kernels.memory.grow(Math.ceil(short / pageBytes));
   let next = firstNumber;
   const at = lengths.map((length) => {
     const start = next;
-    next += 2 * Math.ceil(length / 2);
+    next += even(length);
     return start;
   });
-  const short = next * 8 - loaded.memory.buffer.byteLength;
-  if (short > 0) loaded.memory.grow(Math.ceil(short / pageBytes));
-  const numbers = new Float64Array(loaded.memory.buffer);
-  numbers.fill(0, firstNumber, next);
-  return { kernels: loaded, numbers, at };
+  return { kernels, numbers: new Float64Array(kernels.memory.buffer), at };
 }
 
-function load(): Kernels {
+/** Stretches begin at whole vectors. */
+const even = (length: number): number => 2 * Math.ceil(length / 2);
+const total = (lengths: readonly number[]): number => lengths.reduce((sum, length) => sum + even(length), 0);
+
+function theLasting(): Kernels {
+  lasting ??= instance();
+  return lasting;
+}
+
+function instance(): Kernels {
+  kernelModule ??= load();
+  return new WebAssembly.Instance(kernelModule).exports as unknown as Kernels;
+}
+
+function load(): WebAssembly.Module {
   let root = dirname(fileURLToPath(import.meta.url));
   while (!existsSync(join(root, "package.json"))) root = dirname(root);
   const file = join(root, "dist", "src", "numeric", "kernels.wasm");
   if (!existsSync(file)) throw new Error(`The numeric kernels are missing (${file}). Run \`npm run build\`.`);
-  const { Module, Instance } = WebAssembly;
-  return new Instance(new Module(readFileSync(file))).exports as unknown as Kernels;
+  return new WebAssembly.Module(readFileSync(file));
 }
 
 /** Rows up to a multiple of `of`, as the kernels count them. */

@@ -3,5 +3,6 @@
 // four interleaved parts, rows 0, 4, 8, ..., rows 1, 5, 9, ... and so on, added as (0 + 2) + (1 + 3).
 export { eliminate } from "./eliminate";
 export { filter } from "./filter";
+export { fourier } from "./fourier";
 export { addProducts, movingSums, multiplyRows } from "./products";
 export { correctResiduals, gradient, residualPairs } from "./refine";

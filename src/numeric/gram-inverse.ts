@@ -1,9 +1,10 @@
+import { copyBlock } from "./copy-block.js";
 import { type Matrix, matrix } from "./matrix.js";
-import { copyBlock, joined } from "./refinement.js";
+import { joined } from "./refinement.js";
 import { solveUpper, solveUpperTransposed } from "./scaling.js";
 import { padded, workspace } from "./wasm.js";
 
-const blockRows = 1024;
+const blockRows = 512;
 const splitter = 134217729; // 2²⁷ + 1, Dekker (1971)
 /** Below this condition number the triangle alone gives (X'X)⁻¹ to twelve digits. */
 const wellConditioned = 1000;

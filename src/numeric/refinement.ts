@@ -1,10 +1,11 @@
+import { copyBlock } from "./copy-block.js";
 import type { Matrix } from "./matrix.js";
 import { norm, solveUpper, solveUpperTransposed } from "./scaling.js";
 import { padded, workspace } from "./wasm.js";
 
 const splitter = 134217729; // 2²⁷ + 1, Dekker (1971)
 const mostSteps = 8;
-const blockRows = 1024;
+const blockRows = 512;
 /** The share of a coefficient that a further step may still change: one coefficient in 2¹⁷ is off by its last bit. */
 const settled = 2 ** -70;
 
@@ -139,21 +140,5 @@ function correct(
     copyBlock([residuals, rest], start, rows, numbers, high, stride);
     kernels.correctResiduals(8 * x, 8 * stride, k, padded(rows), 8 * delta, 8 * high, 8 * low);
     residuals.set(numbers.subarray(high, high + rows), start);
-  }
-}
-
-/** Copies rows of each column to the kernels' memory, with zeros up to a whole number of fours. */
-export function copyBlock(
-  columns: readonly Float64Array[],
-  start: number,
-  rows: number,
-  numbers: Float64Array,
-  to: number,
-  stride: number,
-): void {
-  for (let j = 0; j < columns.length; j++) {
-    const at = to + j * stride;
-    numbers.set(columns[j]!.subarray(start, start + rows), at);
-    numbers.fill(0, at + rows, at + padded(rows));
   }
 }

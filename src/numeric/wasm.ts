@@ -6,6 +6,7 @@ import { fileURLToPath } from "node:url";
 interface Kernels {
   readonly memory: { readonly buffer: ArrayBuffer; grow(pages: number): number };
   eliminate(r: number, block: number, stride: number, m: number, rows: number, work: number): void;
+  divideByTriangle(x: number, stride: number, k: number, rows: number, r: number): void;
   residualPairs(
     ...args: [
       x: number,

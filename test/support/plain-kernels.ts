@@ -37,6 +37,18 @@ export function tallRPlain(columns: readonly Float64Array[]): Float64Array {
   return r;
 }
 
+/** X R⁻¹ column after column, in place. */
+export function divideByTrianglePlain(columns: readonly Float64Array[], r: Float64Array): void {
+  const k = columns.length;
+  columns.forEach((target, j) => {
+    const scale = 1 / r[j * k + j]!;
+    for (let t = 0; t < target.length; t++) {
+      for (let i = 0; i < j; i++) target[t]! -= r[j * k + i]! * columns[i]![t]!;
+      target[t]! *= scale;
+    }
+  });
+}
+
 const upper = (a: number): number => {
   const c = 134217729 * a;
   return c - (c - a);

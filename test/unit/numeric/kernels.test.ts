@@ -6,11 +6,13 @@ import {
   fromColumns,
   laggedProducts,
   movingSumProducts,
+  orthonormalBasis,
   solveLeastSquares,
 } from "../../../src/numeric/index.js";
 import { tallR } from "../../../src/numeric/tall-qr.js";
 import { agree } from "../../support/digits.js";
 import {
+  divideByTrianglePlain,
   gradientPlain,
   laggedProductsPlain,
   movingSumProductsPlain,
@@ -30,6 +32,19 @@ test("the triangle has the bits of the plain elimination, whatever the shape", (
       assert.deepEqual([...tallR(columns).data], [...tallRPlain(columns)]);
     }),
     { numRuns: 60, seed: 1 },
+  );
+});
+
+test("an orthonormal basis has the bits of the plain one", () => {
+  fc.assert(
+    fc.property(shapes, ([T, k, seed]) => {
+      fc.pre(T >= k);
+      const columns = gaussian(T, k, seed);
+      const plain = columns.map((column) => column.slice());
+      for (let pass = 0; pass < 2; pass++) divideByTrianglePlain(plain, tallRPlain(plain));
+      assert.deepEqual([...orthonormalBasis(fromColumns(columns)).data], [...fromColumns(plain).data]);
+    }),
+    { numRuns: 30, seed: 4 },
   );
 });
 

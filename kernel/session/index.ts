@@ -1,4 +1,4 @@
-export type { Completions } from "./complete.js";
+export type { Completions } from "./completion/completions.js";
 export type { Inspection } from "./inspect.js";
 export type { Completeness } from "./is-complete.js";
 export type { Bundle, Output, Transient } from "./output.js";

@@ -1,6 +1,6 @@
 import { displaySymbol } from "../../src/data/index.js";
 import { inspected } from "./bundle.js";
-import type { Compiler } from "./compiler/compiler.js";
+import type { Surroundings } from "./completion/complete.js";
 import type { Bundle } from "./output.js";
 
 /** What is known of the name at a place. */
@@ -10,13 +10,11 @@ export interface Inspection {
 }
 
 /**
- * Type and documentation of the name at an offset; just before it when the offset is behind a name or a parenthesis.
- * With `detail` 1 or more, the present value of a variable too.
+ * Type and documentation of the name at an offset; just before it when the offset is behind a name or a parenthesis. Of a
+ * variable also the beginning of its present value, or all of it with `detail` 1 or more.
  */
 export function inspectAt(
-  compiler: Compiler,
-  declarations: string,
-  values: Readonly<Record<string, unknown>>,
+  { compiler, declarations, values }: Surroundings,
   code: string,
   offset: number,
   detail: number,
@@ -27,12 +25,16 @@ export function inspectAt(
     if (!info) continue;
     // An imported name is told as such; cells have the cell functions without an import of their own.
     const told = (info.displayParts ?? []).map(({ text }) => text).join("");
+    if (told === "any") continue; // a name that is nowhere declared
     const signature = told.replace(/^\(alias\) /, "").replace(/\nimport .*$/, "");
     const documentation = (info.documentation ?? []).map(({ text }) => text).join("");
     const tags = (info.tags ?? []).map(
       (tag) => `@${tag.name} ${(tag.text ?? []).map(({ text }) => text).join("")}`,
     );
-    const value = detail > 0 ? presentValue(nameAt(code, at), values) : "";
+    const value = beginning(
+      presentValue(nameAt(code, at), values),
+      detail > 0 ? Number.POSITIVE_INFINITY : 8,
+    );
     const plain = [signature, documentation, ...tags, value].filter(Boolean).join("\n\n");
     const fence = "```";
     const shown = value && `${fence}\n${value}\n${fence}`;
@@ -42,6 +44,11 @@ export function inspectAt(
     if (plain) return { found: true, data: { "text/plain": plain, "text/markdown": markdown } };
   }
   return { found: false, data: {} };
+}
+
+function beginning(text: string, most: number): string {
+  const lines = text.split("\n");
+  return lines.length > most ? [...lines.slice(0, most), "…"].join("\n") : text;
 }
 
 function nameAt(code: string, offset: number): string {

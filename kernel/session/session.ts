@@ -1,7 +1,8 @@
 import { bundleOf } from "./bundle.js";
 import { type CellContext, cellContext } from "./cell-context.js";
 import { type Compiled, type Compiler, createCompiler, importsOf } from "./compiler/compiler.js";
-import { type Completions, complete } from "./complete.js";
+import { complete, type Surroundings } from "./completion/complete.js";
+import type { Completions } from "./completion/completions.js";
 import { CellExecutor } from "./executor.js";
 import { type CellFailure, type CellScript, thrownFailure, typeFailure } from "./failure.js";
 import { givenDeclarations, givenNames } from "./given.js";
@@ -152,11 +153,16 @@ class OpenSession implements Session {
   }
 
   complete(code: string, offset: number): Completions {
-    return complete(this.#compiler, this.#declarations, this.values, code, offset);
+    return complete(this.#surroundings, code, offset);
   }
 
   inspect(code: string, offset: number, detail = 0): Inspection {
-    return inspectAt(this.#compiler, this.#declarations, this.values, code, offset, detail);
+    return inspectAt(this.#surroundings, code, offset, detail);
+  }
+
+  get #surroundings(): Surroundings {
+    const { directory } = this.#options;
+    return { compiler: this.#compiler, declarations: this.#declarations, values: this.values, directory };
   }
 
   isComplete(code: string): Completeness {

@@ -4,7 +4,7 @@ import { carry, globalBlocks } from "./carried.js";
 import type { CompletionInfo, Converter, Diagnostic } from "./converter.js";
 import { applyEdits, type Rewritten } from "./edits.js";
 import { plainOutput } from "./plain-output.js";
-import { annotateAny, prepare } from "./rewrite.js";
+import { annotateAny, prepare, withoutExports } from "./rewrite.js";
 import { inSteps } from "./steps.js";
 import { keepCompiled, ts } from "./typescript.js";
 
@@ -41,8 +41,9 @@ export interface Compiler {
   /** The converter in the form that tslab's executor takes, whose `convert` returns what `compile` last made. */
   readonly converter: Converter;
   compile(declarations: string, source: string): Compiled;
-  complete(declarations: string, source: string, offset: number): CompletionInfo;
-  inspect(declarations: string, source: string, offset: number): ReturnType<Converter["inspect"]>;
+  /** Undefined where the compiler has no answer. */
+  complete(declarations: string, source: string, offset: number): CompletionInfo | undefined;
+  inspect(declarations: string, source: string, offset: number): ReturnType<Converter["inspect"]> | undefined;
   /** Makes the next compiler start quicker; takes a moment. */
   keep(): void;
   close(): void;
@@ -65,18 +66,27 @@ export function createCompiler(declarations = ""): Compiler {
   return {
     converter,
     compile: (declarations, source) => compile(converter, globals, declarations, source),
-    complete(declarations, source, offset) {
-      const cell = applyEdits(source, prepare(source));
-      const found = converter.complete(declarations, cell.text, cell.rewritten(offset));
-      return { ...found, start: cell.original(found.start), end: cell.original(found.end) };
-    },
-    inspect(declarations, source, offset) {
-      const cell = applyEdits(source, prepare(source));
-      return converter.inspect(declarations, cell.text, cell.rewritten(offset));
-    },
+    complete: (declarations, source, offset) =>
+      answered(() => converter.complete(declarations, forServices(source), offset)),
+    inspect: (declarations, source, offset) =>
+      answered(() => converter.inspect(declarations, forServices(source), offset)),
     keep: keepCompiled,
     close: () => converter.close(),
   };
+}
+
+/** A cell as completion and inspection see it: place for place the user's. */
+function forServices(source: string): string {
+  return applyEdits(source, withoutExports(source)).text;
+}
+
+/** The compiler's services give up on some unfinished text. */
+function answered<A>(ask: () => A): A | undefined {
+  try {
+    return ask();
+  } catch {
+    return undefined;
+  }
 }
 
 /** Codes of "this module, or what is imported from it, is not there". */

@@ -3,21 +3,11 @@ import type { Edit } from "./edits.js";
 import { ts } from "./typescript.js";
 
 /**
- * Works around what the converter does not take: `export` before a declaration is blanked out (a cell's names are
- * shared anyway), and the shorthand `{ n }` becomes `{ n: n }`, since a name of an earlier cell is a property there.
+ * Works around what the converter does not take: `export` before a declaration is blanked out, and the shorthand `{ n }`
+ * becomes `{ n: n }`, since a name of an earlier cell is a property there.
  */
 export function prepare(source: string): readonly Edit[] {
-  const file = ts.createSourceFile("cell.ts", source, ts.ScriptTarget.Latest, true, ts.ScriptKind.TS);
-  const edits: Edit[] = [];
-  for (const statement of file.statements) {
-    if (!ts.canHaveModifiers(statement)) continue;
-    for (const modifier of ts.getModifiers(statement) ?? []) {
-      if (modifier.kind !== ts.SyntaxKind.ExportKeyword && modifier.kind !== ts.SyntaxKind.DefaultKeyword)
-        continue;
-      const start = modifier.getStart(file);
-      edits.push({ at: start, removed: modifier.end - start, added: " ".repeat(modifier.end - start) });
-    }
-  }
+  const edits: Edit[] = [...withoutExports(source)];
   const visit = (node: TypeScript.Node): void => {
     if (
       ts.isShorthandPropertyAssignment(node) &&
@@ -28,8 +18,27 @@ export function prepare(source: string): readonly Edit[] {
     }
     ts.forEachChild(node, visit);
   };
-  visit(file);
+  visit(parse(source));
   return edits;
+}
+
+/** Blanks `export` before declarations: a cell's names are shared anyway. */
+export function withoutExports(source: string): readonly Edit[] {
+  if (!/\bexport\b/.test(source)) return [];
+  const file = parse(source);
+  const modifiers = file.statements.flatMap((statement) =>
+    ts.canHaveModifiers(statement) ? [...(ts.getModifiers(statement) ?? [])] : [],
+  );
+  return modifiers
+    .filter(({ kind }) => kind === ts.SyntaxKind.ExportKeyword || kind === ts.SyntaxKind.DefaultKeyword)
+    .map((modifier) => {
+      const start = modifier.getStart(file);
+      return { at: start, removed: modifier.end - start, added: " ".repeat(modifier.end - start) };
+    });
+}
+
+function parse(source: string): TypeScript.SourceFile {
+  return ts.createSourceFile("cell.ts", source, ts.ScriptTarget.Latest, true, ts.ScriptKind.TS);
 }
 
 /** Whether an object literal is the target of a destructuring assignment. */
@@ -44,7 +53,7 @@ function isTarget(literal: TypeScript.Node): boolean {
 
 /** Annotates the declared names at these offsets with `any`: their own types cannot be written down. */
 export function annotateAny(source: string, offsets: readonly number[]): readonly Edit[] {
-  const file = ts.createSourceFile("cell.ts", source, ts.ScriptTarget.Latest, true, ts.ScriptKind.TS);
+  const file = parse(source);
   const edits: Edit[] = [];
   const visit = (node: TypeScript.Node): void => {
     const named = ts.isVariableDeclaration(node) && ts.isIdentifier(node.name) && !node.type;
